@@ -77,6 +77,8 @@ export type Formula =
       readonly fields: readonly { readonly key: string; readonly value: Formula }[]
       readonly span: Span
     }
+  /** `states[1].theta`: a field of something other than a plain name. */
+  | { readonly type: 'field'; readonly of: Formula; readonly key: string; readonly span: Span }
   /** `v[2]`, `M[1, 2]`: indices count from 1. */
   | { readonly type: 'item'; readonly of: Formula; readonly indices: readonly Formula[]; readonly span: Span }
 
