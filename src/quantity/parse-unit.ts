@@ -1,0 +1,243 @@
+import { readRaised } from './exponent.ts'
+import { nearestUnit } from './nearest-unit.ts'
+import { UNITS } from './unit-table.ts'
+import type { UnitExpression } from './units.ts'
+
+/** Why a text is no unit: the fact, and one act to try. */
+export interface UnitProblem {
+  readonly problem: string
+  readonly suggestion?: string
+}
+
+/** Names that people write as units and that no factor fits. */
+const REFUSED: Readonly<Record<string, UnitProblem>> = Object.assign(Object.create(null) as object, {
+  ...everyWay(['degC', 'celsius', 'Celsius', '°C', '℃'], {
+    problem: 'is an offset unit, so it cannot be multiplied by a number',
+    suggestion: 'write temperature differences in K, for example `20 K`',
+  }),
+  ...everyWay(['degF', 'fahrenheit', 'Fahrenheit', '°F', '℉'], {
+    problem: 'is an offset unit, so it cannot be multiplied by a number',
+    suggestion: 'write temperature differences in K: a difference of 1 °F is 5/9 K',
+  }),
+  ...everyWay(['percent', '%', 'permille', '‰'], {
+    problem: 'is no unit: added to a number it would be read in two ways',
+    suggestion: 'write the fraction, for example 0.05 for five in a hundred',
+  }),
+  ...everyWay(['ton', 'tons'], {
+    problem: 'has several meanings: a tonne of mass, a metric tonne-force, a short ton-force',
+    suggestion: 'write `t` (1000 kg), `tf` (1000 kgf) or `tonf` (2000 lbf)',
+  }),
+})
+
+function everyWay(names: readonly string[], why: UnitProblem): Record<string, UnitProblem> {
+  return Object.fromEntries(
+    names.map((name) => [name, { ...why, problem: `\`${name}\` ${why.problem}` } as const]),
+  )
+}
+
+export function isUnitProblem(result: UnitExpression | UnitProblem): result is UnitProblem {
+  return 'problem' in result
+}
+
+const LONGEST = 100
+const LARGEST_EXPONENT = 24
+
+/** One piece at a time: a number, a name, raised digits, or a sign. */
+const TOKEN = /\s*(?:(\d+(?:\.\d+)?)|([\p{L}°%‰℃℉][\p{L}_]*)|([⁻⁰¹²³⁴⁵⁶⁷⁸⁹]+)|(\*\*|[*·⋅∙×/^()\-−]))/uy
+
+interface Token {
+  readonly text: string
+  readonly type: 'number' | 'name' | 'raised' | 'sign'
+}
+
+type Part = UnitExpression[number]
+type Outcome = Part[] | UnitProblem
+
+/**
+ * Reads a unit: names of the table joined by `*`, `·` or `/`, with powers as `^2`, `^-1`, `^(1/2)` or `²`, and brackets.
+ * `/` takes the one factor after it, as in any formula: `kN/m*s` is kN·s/m. The parts come back in the order written,
+ * nothing cancelled, so that a moment per metre stays `kN·m/m`. An empty text is a plain number.
+ */
+export function parseUnit(text: string): UnitExpression | UnitProblem {
+  if (text.length > LONGEST) return { problem: `a unit has at most ${String(LONGEST)} characters` }
+  const tokens = tokenize(text)
+  if ('problem' in tokens) return tokens
+  if (tokens.length === 0) return []
+  const reader = new UnitReader(text.trim(), tokens)
+  return reader.whole()
+}
+
+function tokenize(text: string): Token[] | UnitProblem {
+  const tokens: Token[] = []
+  const source = text.trimEnd()
+  TOKEN.lastIndex = 0
+  while (TOKEN.lastIndex < source.length) {
+    const start = TOKEN.lastIndex
+    const match = TOKEN.exec(source)
+    if (match === null) {
+      const [character] = source.slice(start).trimStart()
+      return { problem: `\`${character ?? ''}\` cannot stand in a unit`, suggestion: FORMS }
+    }
+    const [, number, name, raised, sign] = match
+    if (number !== undefined) tokens.push({ type: 'number', text: number })
+    else if (name !== undefined) tokens.push({ type: 'name', text: name })
+    else if (raised !== undefined) tokens.push({ type: 'raised', text: raised })
+    else tokens.push({ type: 'sign', text: sign ?? '' })
+  }
+  return tokens
+}
+
+const FORMS = 'write units as `kN*m`, `N/mm^2` or `kN*m/rad`'
+const PRODUCT = new Set(['*', '·', '⋅', '∙', '×'])
+
+class UnitReader {
+  private at = 0
+
+  constructor(
+    private readonly text: string,
+    private readonly tokens: readonly Token[],
+  ) {}
+
+  whole(): UnitExpression | UnitProblem {
+    const parts = this.product()
+    if ('problem' in parts) return parts
+    const next = this.tokens[this.at]
+    if (next === undefined) return parts
+    return this.strayed(next)
+  }
+
+  private product(): Outcome {
+    const parts: Part[] = []
+    let direction = 1
+    // `1/m` and a leading `/m`, as after a number: `0.3 /m`
+    if (this.tokens[this.at]?.text === '1') this.at++
+    else if (this.tokens[this.at]?.text !== '/') {
+      const first = this.power()
+      if ('problem' in first) return first
+      parts.push(...first)
+    }
+    for (;;) {
+      const sign = this.tokens[this.at]?.text
+      if (sign === undefined || !(PRODUCT.has(sign) || sign === '/')) return parts
+      this.at++
+      direction = sign === '/' ? -1 : 1
+      const factor = this.power()
+      if ('problem' in factor) return factor
+      for (const { unit, exponent } of factor) parts.push({ unit, exponent: exponent * direction })
+    }
+  }
+
+  private power(): Outcome {
+    const body = this.factor()
+    if ('problem' in body) return body
+    const exponent = this.exponent()
+    if (typeof exponent !== 'number') return exponent
+    const raisedParts = body.map((part) => ({ unit: part.unit, exponent: part.exponent * exponent }))
+    const tooLarge = raisedParts.find((part) => Math.abs(part.exponent) > LARGEST_EXPONENT)
+    if (exponent !== 0 && tooLarge === undefined) return raisedParts
+    return { problem: `the power ${String(exponent)} in \`${this.text}\` is out of range`, suggestion: FORMS }
+  }
+
+  private factor(): Outcome {
+    const token = this.tokens[this.at]
+    if (token === undefined)
+      return { problem: `\`${this.text}\` ends where a unit should follow`, suggestion: FORMS }
+    this.at++
+    if (token.text === '(') {
+      const parts = this.product()
+      if ('problem' in parts) return parts
+      if (this.tokens[this.at]?.text !== ')')
+        return { problem: `a bracket in \`${this.text}\` is not closed` }
+      this.at++
+      return parts
+    }
+    if (token.type !== 'name') return this.strayed(token)
+    if (UNITS[token.text] === undefined) return this.unknown(token.text)
+    return [{ unit: canonical(token.text), exponent: 1 }]
+  }
+
+  /** The power after a factor; 1 when there is none. */
+  private exponent(): number | UnitProblem {
+    const token = this.tokens[this.at]
+    if (token?.type === 'raised') {
+      this.at++
+      return readRaised(token.text) ?? { problem: `\`${token.text}\` in \`${this.text}\` is no power` }
+    }
+    if (token?.text !== '^' && token?.text !== '**') return 1
+    this.at++
+    const bracketed = this.take('(')
+    const value = this.ratio(bracketed)
+    if (typeof value === 'number' && bracketed && !this.take(')')) {
+      return { problem: `a bracket in \`${this.text}\` is not closed` }
+    }
+    return value
+  }
+
+  private ratio(bracketed: boolean): number | UnitProblem {
+    const negative = this.take('-') || this.take('−')
+    const over = this.number()
+    if (over === undefined) {
+      return { problem: `a number should follow \`^\` in \`${this.text}\``, suggestion: FORMS }
+    }
+    const under = bracketed && this.take('/') ? this.number() : 1
+    if (under === undefined || under === 0) return { problem: `the power in \`${this.text}\` is no number` }
+    return (negative ? -over : over) / under
+  }
+
+  private number(): number | undefined {
+    const token = this.tokens[this.at]
+    if (token?.type !== 'number') return undefined
+    this.at++
+    return Number(token.text)
+  }
+
+  private take(sign: string): boolean {
+    if (this.tokens[this.at]?.text !== sign) return false
+    this.at++
+    return true
+  }
+
+  private unknown(name: string): UnitProblem {
+    const next = this.tokens[this.at]
+    return unknownUnit(name + (next?.type === 'number' ? next.text : ''), name)
+  }
+
+  private strayed(token: Token): UnitProblem {
+    const before = this.tokens[this.tokens.indexOf(token) - 1]
+    if (before?.type === 'name' && token.type === 'number') {
+      return {
+        problem: `a power in \`${this.text}\` has no \`^\``,
+        suggestion: `write \`${before.text}^${token.text}\``,
+      }
+    }
+    if (before?.type === 'name' && token.type === 'name') {
+      return {
+        problem: `two units in \`${this.text}\` stand side by side`,
+        suggestion: `write \`${before.text}*${token.text}\``,
+      }
+    }
+    return { problem: `\`${token.text}\` was not expected in the unit \`${this.text}\``, suggestion: FORMS }
+  }
+}
+
+function canonical(name: string): string {
+  return name === 'inch' ? 'in' : name === '°' ? 'deg' : name === 'µm' || name === 'μm' ? 'um' : name
+}
+
+/** The problem with a name that is no unit, with what was likely meant. */
+function unknownUnit(written: string, name: string): UnitProblem {
+  const refused = REFUSED[name]
+  if (refused !== undefined) return refused
+  const problem = `there is no unit \`${written}\``
+  const near = nearestUnit(name) ?? runTogether(name)
+  return near === undefined ? { problem } : { problem, suggestion: `did you mean \`${near}\`?` }
+}
+
+/** `kNm` as `kN*m`: two units of the table written without a sign. */
+function runTogether(name: string): string | undefined {
+  for (let cut = name.length - 1; cut > 0; cut--) {
+    const [first, second] = [name.slice(0, cut), name.slice(cut)]
+    if (UNITS[first] !== undefined && UNITS[second] !== undefined) return `${first}*${second}`
+  }
+  return undefined
+}
