@@ -51,13 +51,35 @@ const SPELLINGS: Readonly<Record<string, string>> = Object.assign(Object.create(
   kelvin: 'K',
 } satisfies Record<string, string>)
 
+const LONGEST = 24
+
 /**
- * The unit that `name` is most likely a slip for: a slip of case (`Mpa`, `KN`), a word (`inches`), or one letter too many,
- * too few, wrong or swapped in a name of three letters or more. Undefined when nothing is near.
+ * The unit, as it should be typed, that `name` is most likely a slip for: a slip of case (`Mpa`, `KN`), a word (`inches`),
+ * a power or product without its sign (`cm4`, `kNm`), or one letter too many, too few, wrong or swapped in a name of three
+ * letters or more. Undefined when nothing is near.
  */
 export function nearestUnit(name: string): string | undefined {
   if (UNITS[name] !== undefined) return name
-  return sameButCase(name) ?? spelledOut(name) ?? oneLetterOff(name)
+  if (name.length > LONGEST) return undefined
+  return (
+    sameButCase(name) ?? spelledOut(name) ?? powerWithoutSign(name) ?? runTogether(name) ?? oneLetterOff(name)
+  )
+}
+
+function powerWithoutSign(name: string): string | undefined {
+  const [, base, power] = /^(\D+)(\d)$/.exec(name) ?? []
+  if (base === undefined || power === undefined) return undefined
+  const near = sameButCase(base) ?? spelledOut(base)
+  return near === undefined ? undefined : `${near}^${power}`
+}
+
+/** `kNm` as `kN*m`: two units of the table written without a sign. */
+function runTogether(name: string): string | undefined {
+  for (let cut = name.length - 1; cut > 0; cut--) {
+    const [first, second] = [name.slice(0, cut), name.slice(cut)]
+    if (UNITS[first] !== undefined && UNITS[second] !== undefined) return `${first}*${second}`
+  }
+  return undefined
 }
 
 function sameButCase(name: string): string | undefined {

@@ -205,15 +205,14 @@ class UnitReader {
   private strayed(token: Token): UnitProblem {
     const before = this.tokens[this.tokens.indexOf(token) - 1]
     if (before?.type === 'name' && token.type === 'number') {
-      return {
-        problem: `a power in \`${this.text}\` has no \`^\``,
-        suggestion: `write \`${before.text}^${token.text}\``,
-      }
+      const better = this.text.replaceAll(/(\p{L})(\d)/gu, '$1^$2')
+      return { problem: `a power in \`${this.text}\` has no \`^\``, suggestion: `write \`${better}\`` }
     }
-    if (before?.type === 'name' && token.type === 'name') {
+    if (before?.type === 'name' && (token.type === 'name' || token.text === '-')) {
+      const better = this.text.replaceAll(/\s*-\s*|(?<=\p{L})\s+(?=\p{L})/gu, '*')
       return {
-        problem: `two units in \`${this.text}\` stand side by side`,
-        suggestion: `write \`${before.text}*${token.text}\``,
+        problem: `a product in \`${this.text}\` is not written with \`*\``,
+        suggestion: `write \`${better}\``,
       }
     }
     return { problem: `\`${token.text}\` was not expected in the unit \`${this.text}\``, suggestion: FORMS }
@@ -229,15 +228,6 @@ function unknownUnit(written: string, name: string): UnitProblem {
   const refused = REFUSED[name]
   if (refused !== undefined) return refused
   const problem = `there is no unit \`${written}\``
-  const near = nearestUnit(name) ?? runTogether(name)
+  const near = nearestUnit(name)
   return near === undefined ? { problem } : { problem, suggestion: `did you mean \`${near}\`?` }
-}
-
-/** `kNm` as `kN*m`: two units of the table written without a sign. */
-function runTogether(name: string): string | undefined {
-  for (let cut = name.length - 1; cut > 0; cut--) {
-    const [first, second] = [name.slice(0, cut), name.slice(cut)]
-    if (UNITS[first] !== undefined && UNITS[second] !== undefined) return `${first}*${second}`
-  }
-  return undefined
 }

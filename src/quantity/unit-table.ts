@@ -56,7 +56,7 @@ derived('km', '1000', { m: 1 }, 'kilometre')
 derived('dm', '0.1', { m: 1 }, 'decimetre')
 derived('cm', '0.01', { m: 1 }, 'centimetre')
 derived('mm', '0.001', { m: 1 }, 'millimetre')
-derived('um', '0.000001', { m: 1 }, 'micrometre', { text: 'µm', tex: '\\text{µ}\\mathrm{m}' })
+derived('um', '0.000001', { m: 1 }, 'micrometre', { text: 'µm', tex: '\\mu\\mathrm{m}' })
 alias('µm', 'um')
 alias('μm', 'um')
 
@@ -76,7 +76,7 @@ table['deg'] = {
   dimension: DIMENSIONLESS,
   words: 'degree',
   text: '°',
-  tex: '^{\\circ}',
+  tex: '{}^{\\circ}',
 }
 alias('°', 'deg')
 
