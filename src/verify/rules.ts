@@ -52,6 +52,16 @@ export const RULES = {
     'a binding names something the used sheet does not take',
     'Only `given` names of the used sheet can be bound. `stanchion explain METHOD` lists them.',
   ),
+  'browser-failed': rule(
+    'error',
+    'the browser that prints the PDF does not start, or ends before it is done',
+    'The PDF is printed by a browser of the Chromium family. The message says what it reported. The HTML does not need it.',
+  ),
+  'browser-missing': rule(
+    'error',
+    'there is no browser to print the PDF with',
+    'The PDF is printed by Chromium, Chrome or Edge, looked for in the usual places of the system. Another place is named in the environment variable STANCHION_BROWSER. The HTML does not need a browser.',
+  ),
   'circular-method': rule(
     'error',
     'a sheet uses itself, directly or through others',
@@ -116,6 +126,11 @@ export const RULES = {
     'error',
     'a result is complex',
     'For example the square root of a negative quantity. In a stability calculation this often means a quantity beyond its limit of validity.',
+  ),
+  'output-unwritable': rule(
+    'error',
+    'a file cannot be written',
+    'The folder is missing, may not be written to, is full or holds something else of that name. No part of the file is left behind.',
   ),
   'reference-missing': rule(
     'note',

@@ -1,0 +1,49 @@
+import type { PDFDocument } from '@cantoo/pdf-lib'
+
+/** What a PDF says of itself. */
+export interface PdfMetadata {
+  readonly title: string
+  /** BCP 47, as `en-GB`. */
+  readonly language: string
+  readonly subject?: string | undefined
+  readonly keywords?: readonly string[] | undefined
+  readonly author?: string | undefined
+  /** The record's date, `2026-03-02`; without one the PDF carries no date, since the clock's would change its bytes. */
+  readonly date?: string | undefined
+  /** Program and version, `Stanchion 0.1.0`. */
+  readonly creator: string
+}
+
+/**
+ * Gives a PDF from the browser its title, language and the other entries of its information dictionary, and takes out
+ * the clock. Tags, bookmarks and pages are left as they are. The same PDF and metadata give the same bytes.
+ */
+export async function finishPdf(pdf: Uint8Array, metadata: PdfMetadata): Promise<Uint8Array> {
+  const { PDFDocument, PDFHeader, PDFName } = await import('@cantoo/pdf-lib')
+  const document = await PDFDocument.load(pdf, { updateMetadata: false })
+  describe(document, metadata)
+  const information = document.context.lookup(document.context.trailerInfo.Info) as { delete?: (k: unknown) => void }
+  for (const key of ['CreationDate', 'ModDate']) information.delete?.(PDFName.of(key))
+  stamp(document, metadata.date)
+  // Object streams came with PDF 1.5; the browser writes 1.4.
+  document.context.header = PDFHeader.forVersion(1, 7)
+  return document.save({ useObjectStreams: true, updateFieldAppearances: false })
+}
+
+function describe(document: PDFDocument, metadata: PdfMetadata): void {
+  const printer = document.getProducer()
+  document.setTitle(metadata.title, { showInWindowTitleBar: true })
+  document.setLanguage(metadata.language)
+  document.setCreator(metadata.creator)
+  document.setProducer(printer ? `${metadata.creator} with ${printer}` : metadata.creator)
+  if (metadata.subject) document.setSubject(metadata.subject)
+  if (metadata.keywords?.length) document.setKeywords([...metadata.keywords])
+  if (metadata.author) document.setAuthor(metadata.author)
+}
+
+function stamp(document: PDFDocument, date: string | undefined): void {
+  const time = date === undefined ? NaN : Date.parse(`${date.slice(0, 10)}T00:00:00Z`)
+  if (!Number.isFinite(time)) return
+  document.setCreationDate(new Date(time))
+  document.setModificationDate(new Date(time))
+}
