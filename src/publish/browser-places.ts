@@ -61,15 +61,18 @@ function onWindows({ env }: System): string[] {
 
 function onPath({ platform, env }: System): string[] {
   const windows = platform === 'win32'
-  const { join, delimiter } = windows ? win32 : posix
+  const paths = windows ? win32 : posix
   // An empty entry means the current folder, from which no program is taken.
-  const folders = (env['PATH'] ?? env['Path'] ?? '').split(delimiter).filter(Boolean)
-  return PATH_NAMES.flatMap((name) => folders.map((folder) => join(folder, windows ? `${name}.exe` : name)))
+  const folders = (env['PATH'] ?? env['Path'] ?? '').split(paths.delimiter).filter(Boolean)
+  return PATH_NAMES.flatMap((name) =>
+    folders.map((folder) => paths.join(folder, windows ? `${name}.exe` : name)),
+  )
 }
 
 /** Browsers that puppeteer's own installer has put in its cache (`chrome/linux-140.0.7339.80/chrome-linux64/chrome`), newest first. */
 function cached(system: System): string[] {
-  const { join } = system.platform === 'win32' ? win32 : posix
+  const paths = system.platform === 'win32' ? win32 : posix
+  const join = (...parts: string[]) => paths.join(...parts)
   const cache = system.env['PUPPETEER_CACHE_DIR'] ?? join(system.home, '.cache', 'puppeteer')
   return ['chrome', 'chrome-headless-shell'].flatMap((product) => {
     const builds = [...system.list(join(cache, product))].sort(newestFirst)

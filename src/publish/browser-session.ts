@@ -16,11 +16,7 @@ export interface BrowserSession {
 }
 
 /** Nothing is loaded from outside the page, and paper does not depend on how a screen hints its fonts. */
-const ARGUMENTS = [
-  '--host-resolver-rules=MAP * ~NOTFOUND',
-  '--font-render-hinting=none',
-  '--disable-gpu',
-]
+const ARGUMENTS = ['--host-resolver-rules=MAP * ~NOTFOUND', '--font-render-hinting=none', '--disable-gpu']
 
 /**
  * Starts a browser with an empty profile of its own. It is spoken to over a pipe, not a port: no other process can reach
@@ -66,7 +62,12 @@ export async function openBrowser(path: string, startLimit: number): Promise<Bro
     const late = stop.signal.aborted
     await close()
     const why = late ? `it did not answer in ${startLimit / 1000} s` : whyNotStarted(path, args)
-    throw new PublishProblem('browser-failed', `the browser \`${path}\` does not start: ${why}`, browserHint(), error)
+    throw new PublishProblem(
+      'browser-failed',
+      `the browser \`${path}\` does not start: ${why}`,
+      browserHint(),
+      error,
+    )
   } finally {
     clearTimeout(timer)
   }
@@ -86,7 +87,9 @@ function whyNotStarted(path: string, args: readonly string[]): string {
     const options = ['--headless', ...args, `--user-data-dir=${profile}`, '--dump-dom', 'about:blank']
     const run = spawnSync(path, options, { timeout: 10_000, killSignal: 'SIGKILL', encoding: 'utf8' })
     if (run.error) return run.error.message
-    const said = run.stderr.split('\n').filter((line) => line.trim() && !/dbus|unexpected operator/.test(line))
+    const said = run.stderr
+      .split('\n')
+      .filter((line) => line.trim() && !/dbus|unexpected operator/.test(line))
     const how = run.signal ? `it was ended by ${run.signal}` : `it ended with status ${run.status}`
     return said[0] ? `${how}, saying \`${said[0].trim().slice(0, 300)}\`` : how
   } finally {

@@ -22,7 +22,9 @@ export async function finishPdf(pdf: Uint8Array, metadata: PdfMetadata): Promise
   const { PDFDocument, PDFHeader, PDFName } = await import('@cantoo/pdf-lib')
   const document = await PDFDocument.load(pdf, { updateMetadata: false })
   describe(document, metadata)
-  const information = document.context.lookup(document.context.trailerInfo.Info) as { delete?: (k: unknown) => void }
+  const information = document.context.lookup(document.context.trailerInfo.Info) as {
+    delete?: (k: unknown) => void
+  }
   for (const key of ['CreationDate', 'ModDate']) information.delete?.(PDFName.of(key))
   stamp(document, metadata.date)
   // Object streams came with PDF 1.5; the browser writes 1.4.
@@ -37,7 +39,7 @@ function describe(document: PDFDocument, metadata: PdfMetadata): void {
   document.setCreator(metadata.creator)
   document.setProducer(printer ? `${metadata.creator} with ${printer}` : metadata.creator)
   if (metadata.subject) document.setSubject(metadata.subject)
-  if (metadata.keywords?.length) document.setKeywords([...metadata.keywords])
+  if (metadata.keywords?.length) document.setKeywords([metadata.keywords.join(', ')])
   if (metadata.author) document.setAuthor(metadata.author)
 }
 

@@ -53,9 +53,17 @@ export async function* printPdf<Job extends PdfJob>(
   }
 }
 
-async function printJob<Job extends PdfJob>(session: BrowserSession, job: Job, limit: number): Promise<PdfResult<Job>> {
+async function printJob<Job extends PdfJob>(
+  session: BrowserSession,
+  job: Job,
+  limit: number,
+): Promise<PdfResult<Job>> {
   try {
-    const { pdf, refused } = await within(limit, printPage(session.browser, job.html))
+    // The PDF library is read while the browser works.
+    const [{ pdf, refused }] = await within(
+      limit,
+      Promise.all([printPage(session.browser, job.html), import('@cantoo/pdf-lib')]),
+    )
     return { job, pdf: await finishPdf(pdf, job.metadata), notes: notes(session, refused) }
   } catch (error) {
     return { job, problem: failed(error) }
@@ -82,12 +90,18 @@ function failed(error: unknown): PublishProblem {
   const [message, hint] =
     error instanceof Late
       ? [`printing took ${text}, which is the limit`, 'split the sheet, or allow more time']
-      : [`the browser ended while printing: ${text}`, 'print once more; if it ends again, print fewer sheets at once']
+      : [
+          `the browser ended while printing: ${text}`,
+          'print once more; if it ends again, print fewer sheets at once',
+        ]
   return new PublishProblem('browser-failed', message, hint, error)
 }
 
 function notes(session: BrowserSession, refused: readonly string[]): string[] {
-  const sandbox = "the browser's sandbox is off because it runs as root; print as an ordinary user to have it on"
-  const loads = refused.map((url) => `the page asked for \`${url.slice(0, 200)}\`; nothing is loaded from outside`)
+  const sandbox =
+    "the browser's sandbox is off because it runs as root; print as an ordinary user to have it on"
+  const loads = refused.map(
+    (url) => `the page asked for \`${url.slice(0, 200)}\`; nothing is loaded from outside`,
+  )
   return session.sandboxed ? loads : [sandbox, ...loads]
 }

@@ -1,11 +1,19 @@
-import { closeSync, fsyncSync, mkdirSync, openSync, realpathSync, renameSync, statSync, unlinkSync } from 'node:fs'
-import { writeFileSync, type Stats } from 'node:fs'
+import * as fs from 'node:fs'
 import { basename, dirname, join } from 'node:path'
 import { cleanUpOnExit } from './clean-up.ts'
 import { PublishProblem } from './publish-problem.ts'
 
 /** The file operations used, so that a full disk can be tried in a test. */
-export const FILES = { closeSync, fsyncSync, mkdirSync, openSync, renameSync, unlinkSync, writeFileSync }
+export const FILES = {
+  closeSync: fs.closeSync,
+  fchmodSync: fs.fchmodSync,
+  fsyncSync: fs.fsyncSync,
+  mkdirSync: fs.mkdirSync,
+  openSync: fs.openSync,
+  renameSync: fs.renameSync,
+  unlinkSync: fs.unlinkSync,
+  writeFileSync: fs.writeFileSync,
+}
 
 export interface WriteOptions {
   /** Make the folder, and those above it, when it does not exist (for `-o DIR`). */
@@ -31,19 +39,25 @@ export function writeAtomic(path: string, content: string | Uint8Array, options:
 }
 
 /** Where the bytes go: the file itself, or what a link points to; and the mode that an existing file has. */
-function existing(path: string): { target: string; mode: number } {
-  const stats: Stats | undefined = statSync(path, { throwIfNoEntry: false })
-  if (!stats) return { target: path, mode: 0o666 }
+function existing(path: string): { target: string; mode?: number } {
+  const stats = fs.statSync(path, { throwIfNoEntry: false })
+  if (!stats) return { target: path }
   if (stats.isDirectory()) throw Object.assign(new Error('is a directory'), { code: 'EISDIR' })
   if (!stats.isFile()) throw Object.assign(new Error('not a regular file'), { code: 'ENOTFILE' })
-  return { target: realpathSync(path), mode: stats.mode & 0o777 }
+  return { target: fs.realpathSync(path), mode: stats.mode & 0o777 }
 }
 
-function replaceFile(target: string, content: string | Uint8Array, mode: number, files: typeof FILES): void {
-  const { temporary, descriptor } = openTemporary(target, mode, files)
+function replaceFile(
+  target: string,
+  content: string | Uint8Array,
+  mode: number | undefined,
+  files: typeof FILES,
+): void {
+  const { temporary, descriptor } = openTemporary(target, files)
   const forget = cleanUpOnExit(() => removeQuietly(temporary, files))
   try {
     try {
+      if (mode !== undefined) files.fchmodSync(descriptor, mode)
       files.writeFileSync(descriptor, content)
       files.fsyncSync(descriptor)
     } finally {
@@ -59,15 +73,11 @@ function replaceFile(target: string, content: string | Uint8Array, mode: number,
   }
 }
 
-function openTemporary(
-  target: string,
-  mode: number,
-  files: typeof FILES,
-): { temporary: string; descriptor: number } {
+function openTemporary(target: string, files: typeof FILES): { temporary: string; descriptor: number } {
   for (let n = 0; ; n++) {
-    const temporary = join(dirname(target), `.${basename(target).slice(0, 200)}.${process.pid}-${n}.part`)
+    const temporary = join(dirname(target), `.${basename(target).slice(0, 60)}.${process.pid}-${n}.part`)
     try {
-      return { temporary, descriptor: files.openSync(temporary, 'wx', mode) }
+      return { temporary, descriptor: files.openSync(temporary, 'wx') }
     } catch (error) {
       // A process of the same number was killed here before and left its file: take the next name.
       if (codeOf(error) !== 'EEXIST' || n > 1000) throw error
@@ -78,14 +88,15 @@ function openTemporary(
 /** Puts the new name on disk too. Windows cannot open a folder, and flushes names itself. */
 function flushFolder(folder: string, files: typeof FILES): void {
   if (process.platform === 'win32') return
-  const descriptor = files.openSync(folder, 'r')
+  let descriptor: number | undefined
   try {
+    descriptor = files.openSync(folder, 'r')
     files.fsyncSync(descriptor)
   } catch (error) {
-    // Some network file systems cannot flush a folder; the file itself is written and renamed by now.
-    if (!['EINVAL', 'ENOTSUP', 'EPERM', 'EBADF'].includes(codeOf(error))) throw error
+    // A folder that may not be read, or a network disk that cannot flush one: the file itself is flushed and renamed.
+    if (!['EACCES', 'EPERM', 'EINVAL', 'ENOTSUP', 'EBADF'].includes(codeOf(error))) throw error
   } finally {
-    files.closeSync(descriptor)
+    if (descriptor !== undefined) files.closeSync(descriptor)
   }
 }
 
@@ -97,7 +108,7 @@ function removeQuietly(path: string, files: typeof FILES): void {
   }
 }
 
-const codeOf = (error: unknown): string => String((error as { code?: unknown } | undefined)?.code ?? '')
+const codeOf = (error: unknown): string => (error as NodeJS.ErrnoException | undefined)?.code ?? ''
 
 type Words = (path: string) => readonly [message: string, hint: string]
 
@@ -105,7 +116,10 @@ const ELSEWHERE = 'choose another folder with `-o DIR`'
 
 /** What each failure of the file system means for who wants the file. */
 const REASONS: Readonly<Record<string, Words>> = {
-  EACCES: (path) => [`no permission to write in \`${dirname(path)}\``, `change its permissions, or ${ELSEWHERE}`],
+  EACCES: (path) => [
+    `no permission to write in \`${dirname(path)}\``,
+    `change its permissions, or ${ELSEWHERE}`,
+  ],
   EPERM: (path) => [
     `writing in \`${dirname(path)}\` is not permitted, or the file is open elsewhere`,
     `close it in other programs, or ${ELSEWHERE}`,
@@ -115,7 +129,10 @@ const REASONS: Readonly<Record<string, Words>> = {
   ENOSPC: () => ['no space is left on the disk', `free some space, or ${ELSEWHERE}`],
   EDQUOT: () => ['the disk quota is used up', `free some space, or ${ELSEWHERE}`],
   EFBIG: () => ['the file is larger than is allowed here', ELSEWHERE],
-  ENOENT: (path) => [`the folder \`${dirname(path)}\` does not exist`, 'make the folder, or check its spelling'],
+  ENOENT: (path) => [
+    `the folder \`${dirname(path)}\` does not exist`,
+    'make the folder, or check its spelling',
+  ],
   ENOTDIR: (path) => [`a part of \`${dirname(path)}\` is a file, not a folder`, ELSEWHERE],
   EEXIST: (path) => [`\`${dirname(path)}\` is a file, a folder was expected`, ELSEWHERE],
   EISDIR: () => ['a folder of that name is there', `rename the folder, or ${ELSEWHERE}`],
