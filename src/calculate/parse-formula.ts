@@ -1,4 +1,4 @@
-import { isUnit, nearestUnit, unitFactor } from '../quantity/units.ts'
+import { isUnit, nearestUnit, toSi, unitFactor } from '../quantity/units.ts'
 import type { Expression, Span } from '../sheet/types.ts'
 import { FormulaError } from './formula-error.ts'
 import { tokenize, type Token } from './tokens.ts'
@@ -243,8 +243,8 @@ class Parser {
     }
     this.next()
     const unit = this.unitFrom(following)
-    const { factor, dimension } = unitFactor(unit)
-    const si = value * factor
+    const { dimension } = unitFactor(unit)
+    const si = toSi(value, unit)
     return { type: 'quantity', value, text: token.text, unit, si, dimension, span: this.spanFrom(token) }
   }
 

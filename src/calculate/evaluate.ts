@@ -1,0 +1,457 @@
+import { DIMENSIONLESS, sameDimension } from '../quantity/dimension.ts'
+import type { Span } from '../sheet/types.ts'
+import {
+  add,
+  compare,
+  divide,
+  isNumeric,
+  isRefusal,
+  multiply,
+  negate,
+  power,
+  same,
+  subtract,
+  type Outcome,
+  type Refusal,
+} from './arithmetic.ts'
+import { describeKind, describeValue, quantity } from './describe.ts'
+import { FormulaError } from './formula-error.ts'
+import { findFunction, nearestFunction } from './functions/index.ts'
+import type {
+  BinaryOperator,
+  Formula,
+  FunctionValue,
+  Quantity,
+  RelationOperator,
+  SolverReport,
+  Value,
+} from './types.ts'
+
+/** Gives names their values, and hears what is learnt on the way. */
+export interface Scope {
+  /** The value of a plain name, or why there is none. */
+  lookup(name: string, span: Span): Value
+  /** A formula's own text, for messages. */
+  source(span: Span): string
+  onBranch?(formula: Formula, taken: boolean): void
+  onReport?(report: SolverReport): void
+}
+
+type Node<T extends Formula['type']> = Extract<Formula, { type: T }>
+
+/** Sheet functions may call each other this deep; a sheet cannot define a recursion, so this only guards the stack. */
+const MAX_CALLS = 200
+
+/**
+ * Calculates a formula. Arithmetic is mathjs's, on quantities in SI base units; every operation first checks dimension and
+ * kind, so that a mistake is found at its own place.
+ *
+ * @throws FormulaError at the operation that has no result
+ */
+export function evaluate(formula: Formula, scope: Scope, calls = 0): Value {
+  const inner = (part: Formula) => evaluate(part, scope, calls)
+  switch (formula.type) {
+    case 'number':
+      return quantity(formula.value, DIMENSIONLESS)
+    case 'quantity':
+      return quantity(formula.si, formula.dimension)
+    case 'constant':
+      return quantity(Math.PI, DIMENSIONLESS)
+    case 'text':
+      return { type: 'text', value: formula.value }
+    case 'truth':
+      return { type: 'truth', value: formula.value }
+    case 'name':
+      return evaluatePath(formula, scope)
+    case 'field':
+      return fieldOf(inner(formula.of), formula.key, formula.span, scope.source(formula.of.span))
+    case 'group':
+      return inner(formula.body)
+    case 'unary':
+      return evaluateUnary(formula, inner, scope)
+    case 'binary':
+      return evaluateBinary(formula, inner, scope)
+    case 'relation':
+      return evaluateRelation(formula, inner, scope)
+    case 'case': {
+      const taken = truthOf(inner(formula.condition), formula.condition, scope)
+      scope.onBranch?.(formula, taken)
+      return inner(taken ? formula.then : formula.otherwise)
+    }
+    case 'list':
+      return listOf(formula, formula.items.map(inner), scope)
+    case 'record':
+      return {
+        type: 'record',
+        of: 'record',
+        title: 'record',
+        fields: Object.fromEntries(formula.fields.map(({ key, value }) => [key, inner(value)])),
+      }
+    case 'item':
+      return itemOf(formula, inner(formula.of), formula.indices.map(inner), scope)
+    case 'call':
+      return evaluateCall(formula, scope, calls)
+  }
+}
+
+function evaluatePath(formula: Node<'name'>, scope: Scope): Value {
+  const [first, ...keys] = formula.path as [string, ...string[]]
+  let value = scope.lookup(first, formula.span)
+  let path = first
+  for (const key of keys) {
+    value = fieldOf(value, key, formula.span, path)
+    path = `${path}.${key}`
+  }
+  return value
+}
+
+function fieldOf(value: Value, key: string, span: Span, owner: string): Value {
+  if (value.type !== 'record') {
+    throw new FormulaError(
+      'undefined-name',
+      `\`${owner}\` is ${describeKind(value)} and has no \`${key}\``,
+      'only sections, materials, used sheets and records have parts',
+      span,
+    )
+  }
+  if (Object.hasOwn(value.fields, key)) return value.fields[key] as Value
+  const names = Object.keys(value.fields)
+  const listed =
+    names.length > 0
+      ? `it has ${names.slice(0, 30).join(', ')}${names.length > 30 ? ' …' : ''}`
+      : 'it has no parts'
+  const what = value.of === 'record' ? `\`${owner}\`` : `the ${value.of} ${value.title} (\`${owner}\`)`
+  throw new FormulaError('undefined-name', `${what} has no \`${key}\``, listed, span)
+}
+
+function truthOf(value: Value, formula: Formula, scope: Scope): boolean {
+  if (value.type === 'truth') return value.value
+  throw new FormulaError(
+    'unit-mismatch',
+    `\`${scope.source(formula.span)}\` is ${describeKind(value)}, and a condition is true or false`,
+    'compare it with something, as in `a <= b`',
+    formula.span,
+  )
+}
+
+function evaluateUnary(formula: Node<'unary'>, inner: (part: Formula) => Value, scope: Scope): Value {
+  const value = inner(formula.body)
+  if (formula.operator === 'not') return { type: 'truth', value: !truthOf(value, formula.body, scope) }
+  if (!isNumeric(value)) {
+    throw new FormulaError(
+      'unit-mismatch',
+      `\`${scope.source(formula.body.span)}\` is ${describeKind(value)} and has no sign`,
+      'use a number or a quantity',
+      formula.body.span,
+    )
+  }
+  return formula.operator === '+' ? value : required(negate(value), formula, [formula.body], [value], scope)
+}
+
+const ARITHMETIC: Readonly<Partial<Record<BinaryOperator, (a: Value, b: Value) => Outcome<Value>>>> = {
+  '+': add,
+  '-': subtract,
+  '*': multiply,
+  '/': divide,
+  '^': power,
+}
+
+function evaluateBinary(formula: Node<'binary'>, inner: (part: Formula) => Value, scope: Scope): Value {
+  const { operator, left, right } = formula
+  if (operator === 'and' || operator === 'or') {
+    const first = truthOf(inner(left), left, scope)
+    if (first === (operator === 'or')) return { type: 'truth', value: first }
+    return { type: 'truth', value: truthOf(inner(right), right, scope) }
+  }
+  const a = inner(left)
+  const b = inner(right)
+  const operation = ARITHMETIC[operator] as (a: Value, b: Value) => Outcome<Value>
+  return required(operation(a, b), formula, [left, right], [a, b], scope)
+}
+
+function evaluateRelation(formula: Node<'relation'>, inner: (part: Formula) => Value, scope: Scope): Value {
+  const values = formula.operands.map(inner)
+  let holds = true
+  formula.operators.forEach((operator, i) => {
+    const pair: [Formula, Formula] = [formula.operands[i] as Formula, formula.operands[i + 1] as Formula]
+    const [a, b] = [values[i] as Value, values[i + 1] as Value]
+    const sides = { ...formula, operatorSpan: { start: pair[0].span.end, end: pair[1].span.start } }
+    if (operator === '==' || operator === '!=') {
+      const { same: equal } = required(same(a, b), sides, pair, [a, b], scope, 'compare')
+      holds &&= equal === (operator === '==')
+    } else {
+      const { order } = required(compare(a, b), sides, pair, [a, b], scope, 'compare')
+      holds &&= inOrder(order, operator)
+    }
+  })
+  return { type: 'truth', value: holds }
+}
+
+/** Whether `a OPERATOR b` holds when a compares to b as `order` compares to 0. */
+export function inOrder(order: number, operator: RelationOperator): boolean {
+  switch (operator) {
+    case '<':
+      return order < 0
+    case '<=':
+      return order <= 0
+    case '>':
+      return order > 0
+    case '>=':
+      return order >= 0
+    case '==':
+      return order === 0
+    case '!=':
+      return order !== 0
+  }
+}
+
+const VERBS: Readonly<Record<string, string>> = {
+  '+': 'add',
+  '-': 'subtract',
+  '*': 'multiply',
+  '/': 'divide',
+  '^': 'raise',
+}
+
+/** Turns a refused operation into a FormulaError at its place, with the values that met. */
+export function required<T extends object>(
+  outcome: Outcome<T>,
+  formula: Formula & { readonly operator?: string; readonly operatorSpan?: Span },
+  parts: readonly Formula[],
+  values: readonly Value[],
+  scope: Scope,
+  verb = VERBS[formula.operator ?? ''] ?? 'use',
+): T {
+  if (!isRefusal(outcome)) return outcome
+  const named = parts.map((part, i) => nameWithValue(part, values[i] as Value, scope))
+  const both = named.join(' and ')
+  const kinds = values.map(describeKind).join(' and ')
+  throw refusalError(outcome, formula, verb, both, named, kinds)
+}
+
+function refusalError(
+  refusal: Refusal,
+  formula: Formula & { readonly operatorSpan?: Span },
+  verb: string,
+  both: string,
+  named: readonly string[],
+  kinds: string,
+): FormulaError {
+  const span = formula.operatorSpan ?? formula.span
+  switch (refusal.refused) {
+    case 'dimension':
+      return new FormulaError(
+        'unit-mismatch',
+        `cannot ${verb} ${both}: ${kinds}`,
+        `check the unit of ${named[1] ?? named[0]}; \`stanchion explain unit-mismatch\` says more`,
+        span,
+      )
+    case 'kind':
+      return new FormulaError(
+        'unit-mismatch',
+        `cannot ${verb} ${both}: ${kinds}`,
+        'use quantities or numbers on both sides',
+        span,
+      )
+    case 'exponent':
+      return new FormulaError(
+        'unit-mismatch',
+        `cannot raise ${named[0]} to the power ${named[1]}: a power is a number without unit`,
+        'divide the exponent by a quantity of its own unit',
+        span,
+      )
+    case 'shape':
+      return new FormulaError(
+        'unit-mismatch',
+        `cannot ${verb} ${both}: their numbers of rows and columns do not fit`,
+        'check the lengths of both',
+        span,
+        refusal.cause,
+      )
+    case 'not-real':
+      return new FormulaError(
+        'not-real',
+        `the result is complex: ${both}`,
+        'check the sign of the quantity under the root or power',
+        formula.span,
+      )
+    case 'not-finite':
+      return new FormulaError(
+        'not-finite',
+        `the result is not a finite number: ${both}`,
+        'check for a division by zero or a quantity outside its range',
+        formula.span,
+      )
+  }
+}
+
+/** `L` (4.6 m); a literal is not repeated. */
+function nameWithValue(part: Formula, value: Value, scope: Scope): string {
+  const source = clip(scope.source(part.span))
+  const isLiteral =
+    part.type === 'number' || part.type === 'quantity' || part.type === 'text' || part.type === 'truth'
+  return isLiteral ? `\`${source}\`` : `\`${source}\` (${describeValue(value)})`
+}
+
+function clip(text: string): string {
+  const flat = text.replace(/\s+/g, ' ')
+  return flat.length > 40 ? `${flat.slice(0, 37)}…` : flat
+}
+
+function listOf(formula: Node<'list'>, values: readonly Value[], scope: Scope): Value {
+  const [first] = values
+  if (!first || !values.every(isNumeric)) return { type: 'list', items: values }
+  const odd = values.findIndex(
+    (value) => !sameDimension((value as Quantity).dimension, (first as Quantity).dimension),
+  )
+  if (odd >= 0) {
+    // Unlike quantities side by side are a list of values (a model's data), not an array for arithmetic.
+    return { type: 'list', items: values }
+  }
+  const { dimension } = first as Quantity
+  if (values.every((value) => value.type === 'quantity'))
+    return { type: 'array', si: values.map((value) => (value as Quantity).si), dimension }
+  const rows = values.map((value) => (value.type === 'array' ? value.si : undefined))
+  const width = rows[0]?.length
+  if (rows.some((row) => row === undefined || row.length !== width || row.some(Array.isArray))) {
+    throw new FormulaError(
+      'unit-mismatch',
+      `the rows of \`${clip(scope.source(formula.span))}\` are not of one length`,
+      'give each row as many entries',
+      formula.span,
+    )
+  }
+  return { type: 'array', si: rows as number[][], dimension }
+}
+
+function itemOf(formula: Node<'item'>, value: Value, indices: readonly Value[], scope: Scope): Value {
+  const numbers = indices.map((index, i) => {
+    const part = formula.indices[i] as Formula
+    if (
+      index.type === 'quantity' &&
+      sameDimension(index.dimension, DIMENSIONLESS) &&
+      Number.isInteger(index.si) &&
+      index.si >= 1
+    )
+      return index.si
+    throw new FormulaError(
+      'function-misused',
+      `the index \`${scope.source(part.span)}\` is ${describeValue(index)}`,
+      'an index is a whole number; the first entry has index 1',
+      part.span,
+    )
+  })
+  let current: unknown = value.type === 'list' ? value.items : value.type === 'array' ? value.si : undefined
+  numbers.forEach((index, i) => {
+    const part = formula.indices[i] as Formula
+    if (!Array.isArray(current)) {
+      throw new FormulaError(
+        'function-misused',
+        `\`${clip(scope.source(formula.of.span))}\` is ${describeKind(value)} and has no entry ${numbers.join(', ')}`,
+        'use as many indices as it has levels',
+        formula.span,
+      )
+    }
+    if (index > current.length) {
+      throw new FormulaError(
+        'function-misused',
+        `entry ${index} was asked for, and there are ${current.length}`,
+        'indices count from 1',
+        part.span,
+      )
+    }
+    current = current[index - 1]
+  })
+  if (value.type === 'list') return current as Value
+  const { dimension } = value as { dimension: Quantity['dimension'] }
+  return typeof current === 'number'
+    ? quantity(current, dimension)
+    : { type: 'array', si: current as number[], dimension }
+}
+
+function evaluateCall(formula: Node<'call'>, scope: Scope, calls: number): Value {
+  const { name, args, span } = formula
+  const builtIn = findFunction(name)
+  const nameSpan: Span = {
+    start: span.start,
+    end: { ...span.start, column: span.start.column + name.length, offset: span.start.offset + name.length },
+  }
+  if (builtIn) {
+    return builtIn.call(
+      args.map((arg) => evaluate(arg, scope, calls)),
+      {
+        formula,
+        source: (part) => scope.source(part.span),
+        report: (report) => scope.onReport?.(report),
+        apply: (fn, values) => applyFunction(fn, values, scope, calls + 1),
+      },
+    )
+  }
+  let value: Value
+  try {
+    value = scope.lookup(name, nameSpan)
+  } catch (cause) {
+    if (cause instanceof FormulaError && cause.rule === 'undefined-name') {
+      const near = nearestFunction(name)
+      throw new FormulaError(
+        'undefined-name',
+        `there is no function \`${name}\``,
+        near ? `did you mean \`${near}\`?` : '`stanchion explain functions` lists the functions',
+        nameSpan,
+        cause,
+      )
+    }
+    throw cause
+  }
+  if (value.type !== 'function') {
+    throw new FormulaError(
+      'bad-expression',
+      `\`${name}\` is ${describeKind(value)}, not a function`,
+      `write \`${name}*(…)\` for a product`,
+      nameSpan,
+    )
+  }
+  if (args.length !== value.parameters.length) {
+    const expected = `${name}(${value.parameters.join(', ')})`
+    throw new FormulaError(
+      'function-misused',
+      `\`${expected}\` is called with ${args.length} argument${args.length === 1 ? '' : 's'}`,
+      `call it as \`${expected}\``,
+      span,
+    )
+  }
+  return applyFunction(
+    value,
+    args.map((arg) => evaluate(arg, scope, calls)),
+    scope,
+    calls + 1,
+  )
+}
+
+/** Calculates a function of the sheet for given arguments. Its names have the values they had where it was defined. */
+export function applyFunction(fn: FunctionValue, args: readonly Value[], scope: Scope, calls = 0): Value {
+  if (calls > MAX_CALLS) {
+    throw new FormulaError(
+      'limit-exceeded',
+      `functions call each other more than ${MAX_CALLS} deep`,
+      'use fewer levels',
+      fn.body.span,
+    )
+  }
+  const local = new Map(fn.parameters.map((parameter, i) => [parameter, args[i] as Value]))
+  const body: Scope = {
+    lookup: (name, span) => {
+      const value = local.get(name) ?? fn.names.get(name)
+      if (value) return value
+      throw new FormulaError(
+        'undefined-name',
+        `\`${name}\` is not defined`,
+        'define it above the function',
+        span,
+      )
+    },
+    source: (span) => scope.source(span),
+    ...(scope.onReport ? { onReport: (report: SolverReport) => scope.onReport?.(report) } : {}),
+  }
+  return evaluate(fn.body, body, calls)
+}
