@@ -1,6 +1,7 @@
-import { existsSync, readFileSync } from 'node:fs'
-import { fileURLToPath } from 'node:url'
+import { readFileSync } from 'node:fs'
+import { join } from 'node:path'
 import { parse } from 'csv-parse/sync'
+import { packageRoot } from '../package-root.ts'
 
 /** A row as printed in the file: column heading → text. */
 export type TableRow = Readonly<Record<string, string>>
@@ -14,7 +15,10 @@ const read = new Map<string, readonly TableRow[]>()
 export function readTable(name: string): readonly TableRow[] {
   const known = read.get(name)
   if (known !== undefined) return known
-  const rows: readonly TableRow[] = parse(readFileSync(tablePath(name), 'utf8'), { bom: true, columns: true })
+  const rows: readonly TableRow[] = parse(readFileSync(join(packageRoot(), 'src', 'data', name), 'utf8'), {
+    bom: true,
+    columns: true,
+  })
   read.set(name, rows)
   return rows
 }
@@ -33,14 +37,4 @@ export function numberIn(row: TableRow, column: string): number {
   if (text.trim() === '' || !Number.isFinite(value))
     throw new Error(`"${text}" in column "${column}" is not a number`)
   return value
-}
-
-/** Beside this file in the source tree; in `src/data` of the package when bundled into `dist`. */
-function tablePath(name: string): string {
-  const places = [`./${name}`, `../src/data/${name}`].map((place) =>
-    fileURLToPath(new URL(place, import.meta.url)),
-  )
-  const found = places.find((place) => existsSync(place))
-  if (found === undefined) throw new Error(`the table ${name} is missing from the installation`)
-  return found
 }
