@@ -1,3 +1,4 @@
+import { sameDimension } from './dimension.ts'
 import { UNITS } from './unit-table.ts'
 
 /** Spellings people use, with the unit of the table that is most likely meant. */
@@ -73,11 +74,13 @@ function powerWithoutSign(name: string): string | undefined {
   return near === undefined ? undefined : `${near}^${power}`
 }
 
-/** `kNm` as `kN*m`: two units of the table written without a sign. */
+/** `kNm` as `kN*m`: two units of unlike dimension written without a sign. */
 function runTogether(name: string): string | undefined {
   for (let cut = name.length - 1; cut > 0; cut--) {
     const [first, second] = [name.slice(0, cut), name.slice(cut)]
-    if (UNITS[first] !== undefined && UNITS[second] !== undefined) return `${first}*${second}`
+    const [a, b] = [UNITS[first], UNITS[second]]
+    if (a !== undefined && b !== undefined && !sameDimension(a.dimension, b.dimension))
+      return `${first}*${second}`
   }
   return undefined
 }

@@ -66,9 +66,10 @@ function unknownProfile(name: string): ProfileProblem {
 function ownLadder(kind: string, text: string): Ladder | ProfileProblem {
   if (!isKind(kind)) return unknownKind(kind)
   const { dimension, words } = KINDS[kind] as { dimension?: Dimension; words: string }
-  if (dimension === undefined || kind === 'number') {
-    return { problem: `${words} has no unit, so \`${kind}\` cannot be given one`, suggestion: 'leave it out' }
-  }
+  if (dimension === undefined)
+    return { problem: `${words} has no unit, but \`${kind}\` gives it one`, suggestion: LEAVE_OUT }
+  if (kind === 'number')
+    return { problem: `${words} cannot be given one, as \`${kind}\` does`, suggestion: LEAVE_OUT }
   const unit = parseUnit(text)
   if (isUnitProblem(unit)) return unit
   const given = unitFactor(unit).dimension
@@ -84,6 +85,8 @@ function ownLadder(kind: string, text: string): Ladder | ProfileProblem {
   }
   return single(unit)
 }
+
+const LEAVE_OUT = 'leave the line out'
 
 function unknownKind(kind: string): ProfileProblem {
   const near = nearestName(kind, [...METRIC.ladders.keys()])

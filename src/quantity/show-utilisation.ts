@@ -1,8 +1,12 @@
+import { raised } from './exponent.ts'
 import { groupDigits, plainDigits, roundDecimal, toDecimal } from './decimal.ts'
 
 const DECIMALS = 3
 /** No double lies nearer to 1 than 1.1e-16. */
 const MOST_DECIMALS = 17
+
+/** From here on the three decimals say nothing; powers of ten are used. */
+const PLAIN_BELOW = 1e7
 
 /**
  * A utilisation to three decimals, and to as many more as it takes not to read as exactly 1 when it is not: 1.0004 and
@@ -12,6 +16,7 @@ const MOST_DECIMALS = 17
 export function showUtilisation(utilisation: number): string {
   if (!Number.isFinite(utilisation))
     throw new RangeError(`a utilisation of ${String(utilisation)} cannot be shown`)
+  if (Math.abs(utilisation) >= PLAIN_BELOW) return inPowersOfTen(utilisation)
   let decimals = DECIMALS
   let text = toDecimals(utilisation, decimals)
   while (utilisation !== 1 && Number(text) === 1 && decimals < MOST_DECIMALS)
@@ -26,4 +31,10 @@ function toDecimals(value: number, decimals: number): string {
   const full = toDecimal(value, true)
   const { whole, fraction } = plainDigits(roundDecimal(full, full.exponent + 1 + decimals))
   return `${whole}.${fraction.slice(0, decimals).padEnd(decimals, '0')}`
+}
+
+function inPowersOfTen(value: number): string {
+  const { digits, exponent } = roundDecimal(toDecimal(value, true), DECIMALS + 1)
+  const sign = value < 0 ? '\u2212' : ''
+  return `${sign}${digits.slice(0, 1)}.${digits.slice(1, DECIMALS + 1)}×10${raised(exponent)}`
 }

@@ -6,7 +6,8 @@ import { fromSi, toSi, unitFactor, unitGap, unitText, type UnitExpression } from
 
 export { showUtilisation } from './show-utilisation.ts'
 
-interface Size {
+/** A value in coherent SI units. */
+export interface Quantified {
   readonly si: number
   readonly dimension: Dimension
 }
@@ -50,7 +51,7 @@ const MINUS = '\u2212'
  * rounding (12.30 from 12.301) and left out where the value is exactly that (6 m). What is shown differs from the value by at
  * most half of its last digit. Throws a RangeError for a value that is not finite or a unit of another dimension.
  */
-export function show(quantity: Size, profile: Profile, options: ShowOptions = {}): Shown {
+export function show(quantity: Quantified, profile: Profile, options: ShowOptions = {}): Shown {
   if (!Number.isFinite(quantity.si)) throw new RangeError(`${String(quantity.si)} cannot be shown`)
   const typed = options.unit === undefined ? keptAsTyped(quantity, options.asTyped) : undefined
   if (typed !== undefined) return typed
@@ -63,7 +64,7 @@ export function show(quantity: Size, profile: Profile, options: ShowOptions = {}
   return compose(value < 0, rounded(value, figures), unit)
 }
 
-function requireDimension({ dimension }: Size, unit: UnitExpression): void {
+function requireDimension({ dimension }: Quantified, unit: UnitExpression): void {
   if (!sameDimension(dimension, unitFactor(unit).dimension)) {
     throw new RangeError(
       `a quantity of dimension [${dimension.join(', ')}] cannot be shown in ${unitText(unit) || 'no unit'}`,
@@ -105,7 +106,7 @@ const TYPED = /^([-−]?)(\d*)(?:\.(\d*))?(?:[eE]([+-]?\d+))?$/
 /** A typed number stands for its value when both agree to this, relatively; else the value is shown. */
 const AGREEMENT = 1e-12
 
-function keptAsTyped(quantity: Size, typed: ShowOptions['asTyped']): Shown | undefined {
+function keptAsTyped(quantity: Quantified, typed: ShowOptions['asTyped']): Shown | undefined {
   if (typed === undefined) return undefined
   const match = TYPED.exec(typed.text.trim())
   if (match === null || !sameDimension(quantity.dimension, unitFactor(typed.unit).dimension)) return undefined

@@ -11,7 +11,8 @@ export function unitText(expression: UnitExpression): string {
 export function unitTex(expression: UnitExpression): string {
   return compose(expression, '{\\cdot}', (name, unit, exponent) => {
     const symbol = unit?.tex ?? `\\mathrm{${name}}`
-    return exponent === 1 ? symbol : `${symbol}^{${exponentText(exponent)}}`
+    if (exponent === 1) return symbol
+    return `${unit?.tex === undefined ? symbol : `{${symbol}}`}^{${exponentText(exponent)}}`
   })
 }
 
@@ -35,11 +36,11 @@ function compose(expression: UnitExpression, product: string, part: Part): strin
   return under.length === 1 ? `${top}/${bottom}` : `${top}/(${bottom})`
 }
 
-/** As spoken after a number other than 1: 'kilonewton metres per radian', 'newtons per square millimetre'. */
-export function unitWords(expression: UnitExpression): string {
+/** As spoken, after a number other than 1 unless `singular`: 'kilonewton metres per radian', 'newtons per square millimetre'. */
+export function unitWords(expression: UnitExpression, singular = false): string {
   const over = expression.filter((e) => e.exponent > 0)
   const under = expression.filter((e) => e.exponent < 0)
-  const top = over.map((e, i) => powerWords(e.unit, e.exponent, i === over.length - 1))
+  const top = over.map((e, i) => powerWords(e.unit, e.exponent, !singular && i === over.length - 1))
   const bottom = under.map((e) => `per ${powerWords(e.unit, -e.exponent, false)}`)
   return [...top, ...bottom].join(' ')
 }
