@@ -1,0 +1,53 @@
+// Builds the package into dist/: the command, the library, its type declarations, the fonts and the licence notices.
+import { execFileSync } from 'node:child_process'
+import { chmodSync, rmSync, writeFileSync } from 'node:fs'
+import { join } from 'node:path'
+import { fileURLToPath } from 'node:url'
+import { rolldown } from 'rolldown'
+import { copyAssets } from './build-assets.js'
+import { licenceNotices } from './build-licences.js'
+
+const ROOT = fileURLToPath(new URL('..', import.meta.url))
+const DIST = join(ROOT, 'dist')
+
+/** The command starts here: it says so when Node is too old, and lets Node 22 and later keep compiled code between runs. */
+const LAUNCHER = `#!/usr/bin/env node
+import module from 'node:module'
+const [major, minor] = process.versions.node.split('.').map(Number)
+if (major < 20 || (major === 20 && minor < 19)) {
+  console.error('stanchion: this is Node ' + process.versions.node + '; Node 20.19 or later is needed')
+  process.exit(2)
+}
+module.enableCompileCache?.()
+await import('./cli.js')
+`
+
+rmSync(DIST, { recursive: true, force: true })
+const bundle = await rolldown({
+  cwd: ROOT,
+  input: { cli: 'src/cli/main.ts', index: 'src/index.ts' },
+  platform: 'node',
+  // Node's own modules stay outside; everything else comes along, so that the package installs nothing else.
+  external: [/^node:/],
+  onLog: (level, log, print) => {
+    if (log.code === 'UNRESOLVED_IMPORT') throw new Error(log.message)
+    print(level, log)
+  },
+})
+const { output } = await bundle.write({
+  dir: DIST,
+  format: 'esm',
+  entryFileNames: '[name].js',
+  chunkFileNames: 'chunks/[name]-[hash].js',
+})
+await bundle.close()
+
+writeFileSync(join(DIST, 'stanchion.js'), LAUNCHER)
+chmodSync(join(DIST, 'stanchion.js'), 0o755)
+const assets = await copyAssets(ROOT, join(DIST, 'assets'))
+const modules = output.flatMap((chunk) => (chunk.type === 'chunk' ? chunk.moduleIds : []))
+writeFileSync(join(DIST, 'THIRD-PARTY-LICENSES.txt'), licenceNotices([...modules, ...assets]))
+const tsc = join(ROOT, 'node_modules/typescript/bin/tsc')
+execFileSync(process.execPath, [tsc, '--project', join(ROOT, '.config/tsconfig.types.json')], {
+  stdio: 'inherit',
+})

@@ -1,0 +1,20 @@
+import { mkdtempSync, rmSync } from 'node:fs'
+import { join } from 'node:path'
+import { fileURLToPath, pathToFileURL } from 'node:url'
+import { rolldown } from 'rolldown'
+
+const ROOT = fileURLToPath(new URL('..', import.meta.url))
+
+/**
+ * Bundles a TypeScript source and imports it, for scripts that run without the test runner. The bundle lies in the
+ * checkout, so that the program finds its own package folder, and is removed when the script ends.
+ * @param {string} source path from the package root
+ */
+export async function importSource(source) {
+  const folder = mkdtempSync(join(ROOT, 'node_modules', '.stanchion-'))
+  process.on('exit', () => rmSync(folder, { recursive: true, force: true }))
+  const bundle = await rolldown({ cwd: ROOT, input: { entry: source }, platform: 'node', logLevel: 'warn' })
+  await bundle.write({ dir: folder, format: 'esm' })
+  await bundle.close()
+  return import(pathToFileURL(join(folder, 'entry.js')).href)
+}
