@@ -15,16 +15,10 @@ import {
   unitTex,
   unitText,
   unitWords,
-  type UnitExpression,
 } from '../../src/quantity/units.ts'
+import { unit } from './read-unit.ts'
 
-export function unit(text: string): UnitExpression {
-  const result = parseUnit(text)
-  if (isUnitProblem(result)) throw new Error(result.problem)
-  return result
-}
-
-/** Multiples of a hair, for factors printed to seven figures. */
+/** Half of the last digit of a factor printed to seven figures, at most. */
 const SEVEN_FIGURES = 5.1e-7
 
 // NIST Special Publication 811 (2008), appendix B.8, factors to seven figures. Those of force, length, mass and angle were
