@@ -5,6 +5,7 @@ import { findFunction } from './functions/index.ts'
 import { FormulaError } from './formula-error.ts'
 import { isSmoothFunction, Symbolic, type Term } from './symbolic.ts'
 import { quantity } from './describe.ts'
+import { partsOf } from './parts-of.ts'
 import type { Formula, FunctionValue, Quantity, Value } from './types.ts'
 
 /** What a coordinate is measured by: 1 for an angle, or the size that the sheet gives. */
@@ -35,6 +36,12 @@ const LOAD_DIMENSIONS: readonly Dimension[] = [
 ]
 const ENERGY: Dimension = [1, 2, -2, 0]
 
+export interface EnergyContext {
+  /** A formula's own text, for messages. */
+  source(span: Span): string
+  readonly budget: { left: number }
+}
+
 /**
  * Makes the plain energy function of a sheet's `V(q1, …, P)`: finds the load's dimension by calculating V with units,
  * turns V into terms, and confirms at a trial state that both give the same.
@@ -44,17 +51,17 @@ const ENERGY: Dimension = [1, 2, -2, 0]
 export function energyFunction(
   fn: FunctionValue,
   coordinates: readonly CoordinateSize[],
-  source: (span: Span) => string,
+  context: EnergyContext,
 ): EnergyFunction {
   const loadName = fn.parameters.at(-1) as string
   const trial = coordinates.map(({ size }, i) => (0.1 * size.si * (i + 1)) / coordinates.length)
-  const { loadDimension, value } = findLoadDimension(fn, coordinates, trial, source)
+  const { loadDimension, value } = findLoadDimension(fn, coordinates, trial, context)
   const graph = new Symbolic()
   const root = toTerm(
     fn,
     fn.parameters.map((_, i) => graph.variable(i)),
     graph,
-    source,
+    context,
   )
   const energy = graph.compile(root)
   const n = coordinates.length
@@ -102,7 +109,7 @@ function findLoadDimension(
   fn: FunctionValue,
   coordinates: readonly CoordinateSize[],
   trial: readonly number[],
-  source: (span: Span) => string,
+  context: EnergyContext,
 ): { loadDimension: Dimension; value: Quantity } {
   const fits: { loadDimension: Dimension; value: Quantity }[] = []
   let first: unknown
@@ -112,7 +119,7 @@ function findLoadDimension(
       quantity(1, loadDimension),
     ]
     try {
-      const value = evaluate(fn.body, scopeOf(fn, args, source))
+      const value = evaluate(fn.body, scopeOf(fn, args, context))
       if (value.type !== 'quantity')
         throw new FormulaError(
           'function-misused',
@@ -142,7 +149,7 @@ function findLoadDimension(
   return chosen
 }
 
-function scopeOf(fn: FunctionValue, args: readonly Value[], source: (span: Span) => string): Scope {
+function scopeOf(fn: FunctionValue, args: readonly Value[], context: EnergyContext): Scope {
   const local = new Map(fn.parameters.map((name, i) => [name, args[i] as Value]))
   return {
     lookup: (name, span) => {
@@ -155,20 +162,17 @@ function scopeOf(fn: FunctionValue, args: readonly Value[], source: (span: Span)
         span,
       )
     },
-    source,
+    source: (span) => context.source(span),
+    budget: context.budget,
   }
 }
 
 /** Turns a function's body into a term, with `args` in place of its parameters. What holds no parameter is calculated once. */
-function toTerm(
-  fn: FunctionValue,
-  args: readonly Term[],
-  graph: Symbolic,
-  source: (span: Span) => string,
-): Term {
+function toTerm(fn: FunctionValue, args: readonly Term[], graph: Symbolic, context: EnergyContext): Term {
   const parameters = new Map(fn.parameters.map((name, i) => [name, args[i] as Term]))
-  const scope = scopeOf({ ...fn, parameters: [] }, [], source)
+  const scope = scopeOf({ ...fn, parameters: [] }, [], context)
   const convert = (formula: Formula): Term => {
+    if (--context.budget.left < 0) throw refuse(formula, 'needs more operations than are allowed')
     if (!mentions(formula, parameters)) {
       const value = evaluate(formula, scope)
       if (value.type === 'quantity') return graph.constant(value.si)
@@ -198,7 +202,7 @@ function toTerm(
       case 'call': {
         const inner = fn.names.get(formula.name)
         if (!findFunction(formula.name) && inner?.type === 'function')
-          return toTerm(inner, formula.args.map(convert), graph, source)
+          return toTerm(inner, formula.args.map(convert), graph, context)
         const [only] = formula.args
         if (formula.args.length === 1 && only && isSmoothFunction(formula.name))
           return graph.call(formula.name, convert(only))
@@ -216,7 +220,7 @@ function toTerm(
   const refuse = (formula: Formula, why: string) =>
     new FormulaError(
       'function-misused',
-      `\`${source(formula.span).replace(/\s+/g, ' ').slice(0, 60)}\` ${why}, and an energy must be smooth`,
+      `\`${context.source(formula.span).replace(/\s+/g, ' ').slice(0, 60)}\` ${why}, and an energy must be smooth`,
       'write the energy with + - * / ^ and smooth functions such as sin, cos, sqrt and exp',
       formula.span,
     )
@@ -231,32 +235,5 @@ function mentions(formula: Formula, names: ReadonlyMap<string, unknown>): boolea
       return formula.args.some((arg) => mentions(arg, names))
     default:
       return partsOf(formula).some((part) => mentions(part, names))
-  }
-}
-
-/** The formulas that a formula is made of. */
-export function partsOf(formula: Formula): readonly Formula[] {
-  switch (formula.type) {
-    case 'group':
-    case 'unary':
-      return [formula.body]
-    case 'binary':
-      return [formula.left, formula.right]
-    case 'relation':
-      return formula.operands
-    case 'case':
-      return [formula.condition, formula.then, formula.otherwise]
-    case 'list':
-      return formula.items
-    case 'record':
-      return formula.fields.map(({ value }) => value)
-    case 'field':
-      return [formula.of]
-    case 'item':
-      return [formula.of, ...formula.indices]
-    case 'call':
-      return formula.args
-    default:
-      return []
   }
 }

@@ -33,6 +33,8 @@ export interface Scope {
   lookup(name: string, span: Span): Value
   /** A formula's own text, for messages. */
   source(span: Span): string
+  /** Operations that may still be made; shared by all formulas of a sheet. */
+  readonly budget: { left: number }
   onBranch?(formula: Formula, taken: boolean): void
   onReport?(report: SolverReport): void
 }
@@ -49,6 +51,14 @@ const MAX_CALLS = 200
  * @throws FormulaError at the operation that has no result
  */
 export function evaluate(formula: Formula, scope: Scope, calls = 0): Value {
+  if (--scope.budget.left < 0) {
+    throw new FormulaError(
+      'limit-exceeded',
+      'the sheet needs more operations than are allowed',
+      'functions that call each other many times multiply the work; name intermediate results',
+      formula.span,
+    )
+  }
   const inner = (part: Formula) => evaluate(part, scope, calls)
   switch (formula.type) {
     case 'number':
@@ -382,6 +392,7 @@ function evaluateCall(formula: Node<'call'>, scope: Scope, calls: number): Value
       {
         formula,
         source: (part) => scope.source(part.span),
+        budget: scope.budget,
         report: (report) => scope.onReport?.(report),
         apply: (fn, values) => applyFunction(fn, values, scope, calls + 1),
       },
@@ -451,6 +462,7 @@ export function applyFunction(fn: FunctionValue, args: readonly Value[], scope: 
       )
     },
     source: (span) => scope.source(span),
+    budget: scope.budget,
     ...(scope.onReport ? { onReport: (report: SolverReport) => scope.onReport?.(report) } : {}),
   }
   return evaluate(fn.body, body, calls)

@@ -36,12 +36,26 @@ const INSTEAD: Readonly<Record<string, string>> = {
   '³': 'write `^3`',
 }
 
+/** A formula that no checker could read is refused; it also bounds the depth of the tree. */
+const MAX_TOKENS = 2000
+const MAX_CHARACTERS = 20_000
+
+function tooLong({ span }: Expression): FormulaError {
+  return new FormulaError(
+    'limit-exceeded',
+    `the formula has more than ${MAX_TOKENS} parts`,
+    'divide it over several lines',
+    span,
+  )
+}
+
 /**
  * Splits a formula into tokens with their places in the source.
  * @throws FormulaError `bad-expression` at the first character that starts no token
  */
 export function tokenize(expression: Expression): Token[] {
   const { text } = expression
+  if (text.length > MAX_CHARACTERS) throw tooLong(expression)
   const place = pointsOf(expression)
   const tokens: Token[] = []
   let at = 0
@@ -61,6 +75,7 @@ export function tokenize(expression: Expression): Token[] {
     if (!found) throw unreadable(text, at, place)
     const [kind, lexeme] = found
     tokens.push({ kind, text: lexeme, span: { start: place(at), end: place(at + lexeme.length) }, spaced })
+    if (tokens.length > MAX_TOKENS) throw tooLong(expression)
     at += lexeme.length
     spaced = false
   }

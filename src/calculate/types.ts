@@ -11,6 +11,7 @@ import type {
   MethodBlock,
   Sheet,
   Span,
+  Statement,
 } from '../sheet/types.ts'
 
 export type { UnitExpression } from '../quantity/units.ts'
@@ -220,10 +221,18 @@ export type Line = NamedLine | CheckLine
 
 export interface CalculatedBlock {
   readonly block: Block
-  /** Lines in document order; a statement that could not be calculated has none (its finding says why). */
+  /** Lines in document order; a statement that could not be calculated is among the failures instead. */
   readonly lines: readonly Line[]
+  readonly failures: readonly Failure[]
   /** For a `method` block: the used sheet, calculated with this sheet's bindings. */
   readonly used?: UsedSheet
+}
+
+/** A statement that could not be calculated. */
+export interface Failure {
+  readonly statement: Statement
+  /** The finding's message, or which earlier failure it depends on. */
+  readonly because: string
 }
 
 export interface UsedSheet {
@@ -240,6 +249,7 @@ export interface CalculatedInline {
   readonly formula?: Formula
   readonly value?: Value
   readonly unit?: UnitExpression
+  /** When the expression is just a name: how that name is best shown. */
   readonly operand?: Operand
 }
 
@@ -250,5 +260,9 @@ export interface Calculation {
   readonly inlineValues: readonly CalculatedInline[]
   /** All names of this sheet in order of definition, for other sheets and for the notation list. */
   readonly names: ReadonlyMap<string, NamedLine>
+  /** The sheets used, by the name they are used as. */
+  readonly usedSheets: ReadonlyMap<string, UsedSheet>
+  /** Every name that some formula of the sheet mentions, calculated or not. */
+  readonly mentioned: ReadonlySet<string>
   readonly findings: readonly VFileMessage[]
 }

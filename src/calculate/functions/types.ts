@@ -6,6 +6,8 @@ export interface CallContext {
   readonly formula: Extract<Formula, { type: 'call' }>
   /** The text of a part of it, for messages. */
   source(part: Formula): string
+  /** Operations that may still be made. */
+  readonly budget: { left: number }
   /** Records how a numerical result came about; the printed sheet shows it under the line. */
   report(report: SolverReport): void
   /** Calculates a function of the sheet for given arguments. */

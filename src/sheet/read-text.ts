@@ -1,0 +1,60 @@
+import { readFileSync, statSync } from 'node:fs'
+
+export type ReadText = { readonly text: string } | { readonly problem: string; readonly hint: string }
+
+/** Largest file that is read, in bytes. */
+const MAX_BYTES = 20_000_000
+
+/** Reads a UTF-8 text file; says why when it cannot. */
+export function readText(path: string): ReadText {
+  let bytes: Uint8Array
+  try {
+    const { size } = statSync(path)
+    if (size > MAX_BYTES)
+      return {
+        problem: `the file has ${size} bytes, and ${MAX_BYTES} are allowed`,
+        hint: 'divide it into several sheets',
+      }
+    bytes = readFileSync(path)
+  } catch (error) {
+    return unreadable(error)
+  }
+  try {
+    return { text: new TextDecoder('utf-8', { fatal: true }).decode(bytes) }
+  } catch (error) {
+    if (!(error instanceof TypeError)) throw error
+    return {
+      problem: 'the file is not text in UTF-8',
+      hint: 'save it as UTF-8; a sheet is a Markdown text file',
+    }
+  }
+}
+
+function unreadable(error: unknown): ReadText {
+  const code = (error as NodeJS.ErrnoException).code
+  switch (code) {
+    case 'ENOENT':
+    case 'ENOTDIR':
+      return {
+        problem: 'there is no such file',
+        hint: 'check the path; it is taken from the folder you are in',
+      }
+    case 'EISDIR':
+      return {
+        problem: 'this is a folder, and a sheet was expected',
+        hint: 'name the sheet, as in `folder/sheet.md`',
+      }
+    case 'EACCES':
+    case 'EPERM':
+      return { problem: 'the file may not be read', hint: 'check its permissions' }
+    case 'ENAMETOOLONG':
+    case 'ELOOP':
+    case 'ERR_INVALID_ARG_VALUE':
+      return { problem: 'this is not a usable path', hint: 'check the path' }
+    default:
+      return {
+        problem: `the file cannot be read (${code ?? String(error)})`,
+        hint: 'check the path and the disk',
+      }
+  }
+}
