@@ -6,15 +6,21 @@ import { rolldown } from 'rolldown'
 const ROOT = fileURLToPath(new URL('..', import.meta.url))
 
 /**
- * Bundles a TypeScript source and imports it, for scripts that run without the test runner. The bundle lies in the
- * checkout, so that the program finds its own package folder, and is removed when the script ends.
+ * Bundles a TypeScript source, for scripts that run without the test runner. The bundle lies in the checkout, so that the
+ * program finds its own package folder, and is removed when the script ends.
  * @param {string} source path from the package root
+ * @returns {Promise<string>} the path of the bundle
  */
-export async function importSource(source) {
+export async function bundleSource(source) {
   const folder = mkdtempSync(join(ROOT, 'node_modules', '.stanchion-'))
   process.on('exit', () => rmSync(folder, { recursive: true, force: true }))
   const bundle = await rolldown({ cwd: ROOT, input: { entry: source }, platform: 'node', logLevel: 'warn' })
   await bundle.write({ dir: folder, format: 'esm' })
   await bundle.close()
-  return import(pathToFileURL(join(folder, 'entry.js')).href)
+  return join(folder, 'entry.js')
+}
+
+/** @param {string} source path from the package root */
+export async function importSource(source) {
+  return import(pathToFileURL(await bundleSource(source)).href)
 }
