@@ -1,45 +1,14 @@
 import { readRaised } from './exponent.ts'
-import { nearestUnit } from './nearest-unit.ts'
 import { UNITS } from './unit-table.ts'
+import { unknownUnit, type UnitProblem } from './unknown-unit.ts'
 import type { UnitExpression } from './units.ts'
-
-/** Why a text is no unit: the fact, and one act to try. */
-export interface UnitProblem {
-  readonly problem: string
-  readonly suggestion?: string
-}
-
-/** Names that people write as units and that no factor fits. */
-const REFUSED: Readonly<Record<string, UnitProblem>> = Object.assign(Object.create(null) as object, {
-  ...everyWay(['degC', 'celsius', 'Celsius', '°C', '℃'], {
-    problem: 'is an offset unit, so it cannot be multiplied by a number',
-    suggestion: 'write temperature differences in K, for example `20 K`',
-  }),
-  ...everyWay(['degF', 'fahrenheit', 'Fahrenheit', '°F', '℉'], {
-    problem: 'is an offset unit, so it cannot be multiplied by a number',
-    suggestion: 'write temperature differences in K: a difference of 1 °F is 5/9 K',
-  }),
-  ...everyWay(['percent', '%', 'permille', '‰'], {
-    problem: 'is no unit: added to a number it would be read in two ways',
-    suggestion: 'write the fraction, for example 0.05 for five in a hundred',
-  }),
-  ...everyWay(['ton', 'tons'], {
-    problem: 'has several meanings: a tonne of mass, a metric tonne-force, a short ton-force',
-    suggestion: 'write `t` (1000 kg), `tf` (1000 kgf) or `tonf` (2000 lbf)',
-  }),
-})
-
-function everyWay(names: readonly string[], why: UnitProblem): Record<string, UnitProblem> {
-  return Object.fromEntries(
-    names.map((name) => [name, { ...why, problem: `\`${name}\` ${why.problem}` } as const]),
-  )
-}
 
 export function isUnitProblem(result: UnitExpression | UnitProblem): result is UnitProblem {
   return 'problem' in result
 }
 
 const LONGEST = 100
+/** The sum of all powers, so that no factor can leave the range of a double. */
 const LARGEST_EXPONENT = 24
 
 /** One piece at a time: a number, a name, raised digits, or a sign. */
@@ -102,8 +71,10 @@ class UnitReader {
     const parts = this.product()
     if ('problem' in parts) return parts
     const next = this.tokens[this.at]
-    if (next === undefined) return parts
-    return this.strayed(next)
+    if (next !== undefined) return this.strayed(next)
+    const powers = parts.reduce((sum, part) => sum + Math.abs(part.exponent), 0)
+    if (powers <= LARGEST_EXPONENT) return parts
+    return { problem: `the powers in \`${this.text}\` add up to more than ${String(LARGEST_EXPONENT)}` }
   }
 
   private product(): Outcome {
@@ -199,7 +170,7 @@ class UnitReader {
 
   private unknown(name: string): UnitProblem {
     const next = this.tokens[this.at]
-    return unknownUnit(name + (next?.type === 'number' ? next.text : ''), name)
+    return unknownUnit(name, name + (next?.type === 'number' ? next.text : ''))
   }
 
   private strayed(token: Token): UnitProblem {
@@ -221,13 +192,4 @@ class UnitReader {
 
 function canonical(name: string): string {
   return name === 'inch' ? 'in' : name === '°' ? 'deg' : name === 'µm' || name === 'μm' ? 'um' : name
-}
-
-/** The problem with a name that is no unit, with what was likely meant. */
-function unknownUnit(written: string, name: string): UnitProblem {
-  const refused = REFUSED[name]
-  if (refused !== undefined) return refused
-  const problem = `there is no unit \`${written}\``
-  const near = nearestUnit(name)
-  return near === undefined ? { problem } : { problem, suggestion: `did you mean \`${near}\`?` }
 }

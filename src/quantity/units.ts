@@ -4,8 +4,9 @@ import { UNITS, type Unit } from './unit-table.ts'
 
 export { UNITS, type Unit } from './unit-table.ts'
 export { nearestUnit } from './nearest-unit.ts'
-export { isUnitProblem, parseUnit, type UnitProblem } from './parse-unit.ts'
+export { isUnitProblem, parseUnit } from './parse-unit.ts'
 export { unitGap, unitTex, unitText, unitWords } from './unit-text.ts'
+export { unknownUnit, type UnitProblem } from './unknown-unit.ts'
 
 /** A unit as written after a number: `kN*m/rad` is [{kN, 1}, {m, 1}, {rad, -1}]; empty for a plain number. */
 export type UnitExpression = readonly { readonly unit: string; readonly exponent: number }[]
@@ -33,7 +34,8 @@ const known = new WeakMap<UnitExpression, Conversion>()
 
 /**
  * The SI factor and dimension of a unit. The factor of whole powers is exact before it is rounded once to a double.
- * Throws for a unit that is not in the table: names are resolved by `parseUnit` before.
+ * Throws a RangeError for a unit that is not in the table, and for powers whose factor no double can hold; `parseUnit`
+ * lets neither through.
  */
 export function unitFactor(expression: UnitExpression): UnitFactor {
   return conversion(expression)
@@ -69,6 +71,7 @@ function calculateConversion(expression: UnitExpression): Conversion {
     for (let i = 0; i < 4; i++) dimension[i] = (dimension[i] ?? 0) + (unit.dimension[i] ?? 0) * exponent
   }
   const factor = toNumber(exact) * rest
+  if (!(factor > 0 && Number.isFinite(factor))) throw new RangeError('the powers of this unit are too large')
   const inverse = toNumber({ over: exact.under, under: exact.over }) / rest
   const byDividing = factor < 1 && Number.isInteger(inverse)
   return { factor, dimension, multiply: byDividing ? 1 : factor, divide: byDividing ? inverse : 1 }
