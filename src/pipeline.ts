@@ -101,9 +101,7 @@ function profileFindings(sheet: Sheet): VFileMessage[] {
     finding({
       rule: 'bad-front-matter',
       message: `\`units\`: ${profile.problem}`,
-      hint: profile.suggestion
-        ? `did you mean \`${profile.suggestion}\`?`
-        : 'write `metric`, `us`, or a map such as `{force: kN, length: mm}`',
+      hint: profile.suggestion ?? 'write `metric`, `us`, or a map such as `{force: kN, length: mm}`',
       file: sheet.path,
       span,
     }),

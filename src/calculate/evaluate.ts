@@ -431,12 +431,22 @@ function evaluateCall(formula: Node<'call'>, scope: Scope, calls: number): Value
       span,
     )
   }
-  return applyFunction(
-    value,
-    args.map((arg) => evaluate(arg, scope, calls)),
-    scope,
-    calls + 1,
-  )
+  const values = args.map((arg) => evaluate(arg, scope, calls))
+  try {
+    return applyFunction(value, values, scope, calls + 1)
+  } catch (cause) {
+    if (!(cause instanceof FormulaError) || cause.rule === 'limit-exceeded') throw cause
+    const inputs = value.parameters.map(
+      (parameter, i) => `${parameter} = ${describeValue(values[i] as Value)}`,
+    )
+    throw new FormulaError(
+      cause.rule,
+      `in \`${name}\` with ${inputs.join(', ')}: ${cause.message}`,
+      cause.hint,
+      span,
+      cause,
+    )
+  }
 }
 
 /** Calculates a function of the sheet for given arguments. Its names have the values they had where it was defined. */

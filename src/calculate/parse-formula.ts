@@ -1,4 +1,4 @@
-import { isUnit, nearestUnit, toSi, unitFactor } from '../quantity/units.ts'
+import { isUnit, toSi, unitFactor, unknownUnit } from '../quantity/units.ts'
 import type { Expression, Span } from '../sheet/types.ts'
 import { FormulaError } from './formula-error.ts'
 import { tokenize, type Token } from './tokens.ts'
@@ -12,6 +12,10 @@ export interface ParsedFormula {
 
 /** Brackets, conditionals and lists may stand inside each other this deep. */
 const MAX_DEPTH = 100
+
+/** Largest power of a unit, and most units in one expression; the SI has no use for more. */
+const MAX_UNIT_POWER = 12
+const MAX_UNITS = 8
 
 /**
  * Reads a formula: the arithmetic, comparison and conditional part of mathjs's expression syntax, less everything that
@@ -252,6 +256,8 @@ class Parser {
   private unitFrom(first: Token): UnitExpression {
     const parts = [{ unit: this.unitName(first), exponent: this.unitExponent() }]
     for (;;) {
+      if (parts.length > MAX_UNITS)
+        this.fail(`a unit is made of at most ${MAX_UNITS} parts`, 'use a unit that is shorter')
       const operator = this.peek()
       const name = this.peek(1)
       const juxtaposed = operator.kind === 'name' && isUnit(operator.text)
@@ -281,15 +287,13 @@ class Parser {
   private unitName(token: Token): string {
     const { text } = token
     if (!isUnit(text)) {
-      const near = nearestUnit(text)
+      const { problem, suggestion } = unknownUnit(text)
       const hint = this.isDefined(text)
         ? `\`${text}\` is a value of this sheet: write \`*\` before it`
-        : near
-          ? `did you mean \`${near}\`?`
-          : '`stanchion explain units` lists the units; write `*` for a product'
+        : (suggestion ?? '`stanchion explain units` lists the units; write `*` for a product')
       throw new FormulaError(
         'unit-unknown',
-        `a number directly before \`${text}\` makes it a unit, and there is no such unit`,
+        `a number directly before \`${text}\` makes it a unit: ${problem}`,
         hint,
         token.span,
       )
@@ -311,9 +315,10 @@ class Parser {
     const negative = this.peekSymbol('-')
     if (negative) this.next()
     const digits = this.next()
-    if (digits.kind !== 'number')
-      this.fail('the power of a unit is a number', 'write for example `mm^2`', caret)
-    return negative ? -Number(digits.text) : Number(digits.text)
+    const power = Number(digits.text)
+    if (digits.kind !== 'number' || !(power > 0 && power <= MAX_UNIT_POWER))
+      this.fail(`the power of a unit is a number up to ${MAX_UNIT_POWER}`, 'write for example `mm^2`', caret)
+    return negative ? -power : power
   }
 
   private nameOrCall(token: Token): Formula {
