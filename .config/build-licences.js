@@ -1,5 +1,8 @@
-import { existsSync, readFileSync, readdirSync } from 'node:fs'
+import { readFileSync, readdirSync } from 'node:fs'
 import { join } from 'node:path'
+import { fileURLToPath } from 'node:url'
+
+const ROOT = fileURLToPath(new URL('..', import.meta.url))
 
 /** Licences that allow what a bundle does: copying, on condition of keeping the notice. */
 const PERMISSIVE = [
@@ -12,6 +15,9 @@ const PERMISSIVE = [
   'OFL-1.1',
   'Unlicense',
 ]
+
+/** Packages whose manifest has no licence, with the file that states it. */
+const STATED_ELSEWHERE = { format: { licence: 'MIT', file: 'Readme.md' } }
 
 /**
  * The licence notices of all packages that files come from.
@@ -34,26 +40,39 @@ function packageFolder(file) {
 }
 
 function notice(folder) {
-  const { name, version, license, author, homepage } = JSON.parse(
-    readFileSync(join(folder, 'package.json'), 'utf8'),
-  )
-  const licence = typeof license === 'string' ? license : license?.type
-  const choices = String(licence).replace(/[()]/g, '').split(' OR ')
-  if (!choices.some((choice) => PERMISSIVE.includes(choice))) {
-    throw new Error(
-      `${name} ${version} has the licence ${licence}; a bundled package needs one of ${PERMISSIVE.join(', ')}`,
-    )
+  const { name, version, license, author } = JSON.parse(readFileSync(join(folder, 'package.json'), 'utf8'))
+  const stated = STATED_ELSEWHERE[name]
+  const licence = stated?.licence ?? String(typeof license === 'string' ? license : license?.type)
+  const chosen = licence
+    .replace(/[()]/g, '')
+    .split(' OR ')
+    .find((choice) => PERMISSIVE.includes(choice))
+  if (!chosen) {
+    const wanted = PERMISSIVE.join(', ')
+    throw new Error(`${name} ${version} has the licence ${licence}; a bundled package needs one of ${wanted}`)
   }
-  const holder = typeof author === 'string' ? author : author?.name
-  const texts = licenceFiles(folder)
-  const text =
-    texts.length > 0 ? texts.join('\n\n') : `${licence}, by ${holder ?? 'its authors'}, ${homepage ?? ''}`
-  return { name, version, licence, text }
+  const texts = stated ? [readFileSync(join(folder, stated.file), 'utf8')] : licenceFiles(folder)
+  const holder = (typeof author === 'string' ? author : author?.name) ?? `the authors of ${name}`
+  return {
+    name,
+    version,
+    licence,
+    text: texts.length > 0 ? texts.join('\n\n') : standardText(chosen, holder),
+  }
 }
 
 function licenceFiles(folder) {
   const names = readdirSync(folder).filter((name) => /^(licen[cs]e|notice|copying)([.-].*)?$/i.test(name))
-  return names
-    .sort()
-    .flatMap((name) => (existsSync(join(folder, name)) ? readFileSync(join(folder, name), 'utf8') : []))
+  return names.sort().map((name) => readFileSync(join(folder, name), 'utf8'))
+}
+
+/** The text of a licence for a package that names it but does not carry it. */
+function standardText(licence, holder) {
+  const copyright = `Copyright (c) ${holder}`
+  if (licence === 'MIT')
+    return readFileSync(join(ROOT, 'LICENSE'), 'utf8').replace(/^Copyright.*$/m, copyright)
+  // TypeScript, which builds this package, carries the Apache licence in full.
+  const apache = join(ROOT, 'node_modules/typescript/LICENSE.txt')
+  if (licence === 'Apache-2.0') return `${copyright}\n\n${readFileSync(apache, 'utf8')}`
+  throw new Error(`a bundled package of ${holder} carries no text of its licence ${licence}`)
 }

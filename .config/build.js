@@ -1,11 +1,11 @@
 // Builds the package into dist/: the command, the library, its type declarations, the fonts and the licence notices.
-import { execFileSync } from 'node:child_process'
 import { chmodSync, rmSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { fileURLToPath } from 'node:url'
 import { rolldown } from 'rolldown'
 import { copyAssets } from './build-assets.js'
 import { licenceNotices } from './build-licences.js'
+import { writeTypes } from './build-types.js'
 
 const ROOT = fileURLToPath(new URL('..', import.meta.url))
 const DIST = join(ROOT, 'dist')
@@ -47,7 +47,4 @@ chmodSync(join(DIST, 'stanchion.js'), 0o755)
 const assets = await copyAssets(ROOT, join(DIST, 'assets'))
 const modules = output.flatMap((chunk) => (chunk.type === 'chunk' ? chunk.moduleIds : []))
 writeFileSync(join(DIST, 'THIRD-PARTY-LICENSES.txt'), licenceNotices([...modules, ...assets]))
-const tsc = join(ROOT, 'node_modules/typescript/bin/tsc')
-execFileSync(process.execPath, [tsc, '--project', join(ROOT, '.config/tsconfig.types.json')], {
-  stdio: 'inherit',
-})
+writeTypes(ROOT, join(DIST, 'types'))

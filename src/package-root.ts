@@ -19,7 +19,9 @@ function search(start: string): string {
   for (let folder = start; ; folder = dirname(folder)) {
     if (isOurs(join(folder, 'package.json'))) return folder
     if (folder === dirname(folder)) {
-      throw new Error(`the package folder of stanchion was not found above \`${start}\`; install the package anew`)
+      throw new Error(
+        `the package folder of stanchion was not found above \`${start}\`; install the package anew`,
+      )
     }
   }
 }
