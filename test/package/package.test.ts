@@ -157,18 +157,17 @@ describe('the package installed in another folder', () => {
       inFolder('use.ts'),
       `import * as stanchion from 'stanchion'\nexport const names: string[] = Object.keys(stanchion)\n`,
     )
-    const check = (module: string, resolution: string) =>
-      spawnSync(
-        process.execPath,
-        [
-          join(ROOT, 'node_modules/typescript/bin/tsc'),
-          ...['--noEmit', '--strict', '--target', 'es2022', '--types', ''],
-          ...['--module', module, '--moduleResolution', resolution, 'use.ts'],
-        ],
-        { cwd: folder, encoding: 'utf8' },
-      ).stdout
-    expect(check('esnext', 'bundler')).toBe('')
-    expect(check('nodenext', 'nodenext')).toBe('')
+    const complaints = (module: string, moduleResolution: string) => {
+      const options = { noEmit: true, strict: true, target: 'es2022', types: [], module, moduleResolution }
+      writeFileSync(
+        inFolder('tsconfig.json'),
+        JSON.stringify({ compilerOptions: options, files: ['use.ts'] }),
+      )
+      const tsc = [join(ROOT, 'node_modules/typescript/bin/tsc'), '--project', folder]
+      return spawnSync(process.execPath, tsc, { encoding: 'utf8' }).stdout
+    }
+    expect(complaints('esnext', 'bundler')).toBe('')
+    expect(complaints('nodenext', 'nodenext')).toBe('')
     const names = execFileSync(
       process.execPath,
       ['--input-type=module', '-e', 'console.log(Object.keys(await import("stanchion")).length)'],

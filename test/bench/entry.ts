@@ -1,0 +1,6 @@
+// What the bench measures inside one process, bundled as the command is.
+export { prepareSheet } from '../../src/pipeline.ts'
+export { htmlText } from '../../src/publish/html-text.ts'
+export { printPdf } from '../../src/publish/print-pdf.ts'
+export { parseSheet } from '../../src/sheet/parse-sheet.ts'
+export { typeset } from '../../src/typeset/typeset.ts'
