@@ -70,10 +70,7 @@ export class SheetLibrary {
       return unknown(
         '`stanchion methods` lists the methods; a sheet of your own is named by a path such as `./basis.md`',
       )
-    const [standard, clause] = id.split('/') as [string, string]
-    const editions = ids.filter(
-      (known) => known === id || (known.startsWith(`${standard}-`) && known.endsWith(`/${clause}`)),
-    )
+    const editions = ids.filter((known) => known === id || withoutEdition(known) === id)
     const exact = editions.find((known) => known === id) ?? (editions.length === 1 ? editions[0] : undefined)
     if (!exact) {
       if (editions.length > 1)
@@ -100,6 +97,11 @@ export class SheetLibrary {
     this.parsed.set(path, result)
     return result
   }
+}
+
+/** `en1993-1-1-2005/6.3.1` is `en1993-1-1/6.3.1`: the edition is the last number of the folder, of two to four digits. */
+function withoutEdition(id: string): string {
+  return id.replace(/-\d{2,4}(?=\/)/, '')
 }
 
 /** The ids of all built-in methods, sorted: `<standard>-<edition>/<clause>`. */
