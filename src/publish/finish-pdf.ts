@@ -1,4 +1,5 @@
-import type { PDFDocument } from '@cantoo/pdf-lib'
+import { PDFDict, PDFDocument, PDFHeader, PDFName } from '@cantoo/pdf-lib'
+import { renumberTags } from './renumber-tags.ts'
 
 /** What a PDF says of itself. */
 export interface PdfMetadata {
@@ -16,17 +17,13 @@ export interface PdfMetadata {
 
 /**
  * Gives a PDF from the browser its title, language and the other entries of its information dictionary, and takes out
- * the clock. Tags, bookmarks and pages are left as they are. The same PDF and metadata give the same bytes.
+ * what would differ between two prints of the same page. Tags, bookmarks and pages stay as they are.
  */
 export async function finishPdf(pdf: Uint8Array, metadata: PdfMetadata): Promise<Uint8Array> {
-  const { PDFDocument, PDFHeader, PDFName } = await import('@cantoo/pdf-lib')
   const document = await PDFDocument.load(pdf, { updateMetadata: false })
   describe(document, metadata)
-  const information = document.context.lookup(document.context.trailerInfo.Info) as {
-    delete?: (k: unknown) => void
-  }
-  for (const key of ['CreationDate', 'ModDate']) information.delete?.(PDFName.of(key))
-  stamp(document, metadata.date)
+  date(document, metadata.date)
+  renumberTags(document)
   // Object streams came with PDF 1.5; the browser writes 1.4.
   document.context.header = PDFHeader.forVersion(1, 7)
   return document.save({ useObjectStreams: true, updateFieldAppearances: false })
@@ -43,9 +40,12 @@ function describe(document: PDFDocument, metadata: PdfMetadata): void {
   if (metadata.author) document.setAuthor(metadata.author)
 }
 
-function stamp(document: PDFDocument, date: string | undefined): void {
-  const time = date === undefined ? NaN : Date.parse(`${date.slice(0, 10)}T00:00:00Z`)
-  if (!Number.isFinite(time)) return
-  document.setCreationDate(new Date(time))
-  document.setModificationDate(new Date(time))
+/** Puts the record's date in place of the clock's. */
+function date(document: PDFDocument, day: string | undefined): void {
+  const information = document.context.lookupMaybe(document.context.trailerInfo.Info, PDFDict)
+  for (const key of ['CreationDate', 'ModDate']) information?.delete(PDFName.of(key))
+  const time = new Date(`${day?.slice(0, 10)}T00:00:00Z`)
+  if (Number.isNaN(time.getTime())) return
+  document.setCreationDate(time)
+  document.setModificationDate(time)
 }

@@ -1,6 +1,6 @@
 import { openBrowser, type BrowserSession } from './browser-session.ts'
 import { findBrowser } from './find-browser.ts'
-import { finishPdf, type PdfMetadata } from './finish-pdf.ts'
+import type { PdfMetadata } from './finish-pdf.ts'
 import { printPage } from './print-page.ts'
 import { PublishProblem } from './publish-problem.ts'
 
@@ -60,9 +60,9 @@ async function printJob<Job extends PdfJob>(
 ): Promise<PdfResult<Job>> {
   try {
     // The PDF library is read while the browser works.
-    const [{ pdf, refused }] = await within(
+    const [{ pdf, refused }, { finishPdf }] = await within(
       limit,
-      Promise.all([printPage(session.browser, job.html), import('@cantoo/pdf-lib')]),
+      Promise.all([printPage(session.browser, job.html), import('./finish-pdf.ts')]),
     )
     return { job, pdf: await finishPdf(pdf, job.metadata), notes: notes(session, refused) }
   } catch (error) {

@@ -30,7 +30,7 @@ export async function readPdf(bytes: Uint8Array): Promise<ReadPdf> {
 
 async function readDocument(document: PDFDocumentProxy): Promise<ReadPdf> {
   const { info } = await document.getMetadata()
-  const preferences = (await document.getViewerPreferences())
+  const preferences: { DisplayDocTitle?: boolean } | null = await document.getViewerPreferences()
   const marks = (await document.getMarkInfo()) as { Marked?: boolean } | null
   const facts = { pages: [] as string[], roles: new Set<string>(), alternatives: [] as string[] }
   const fonts = new Map<string, boolean>()
@@ -45,7 +45,7 @@ async function readDocument(document: PDFDocumentProxy): Promise<ReadPdf> {
   return {
     pages: facts.pages,
     size: { width, height },
-    outline: bookmarks((await document.getOutline())),
+    outline: bookmarks(await document.getOutline()),
     info: entries,
     tagged: marks?.Marked === true,
     language: entries['Language'] as string | undefined,
