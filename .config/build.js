@@ -1,5 +1,5 @@
 // Builds the package into dist/: the command, the library, its type declarations, the fonts and the licence notices.
-import { chmodSync, rmSync, writeFileSync } from 'node:fs'
+import { chmodSync, existsSync, mkdtempSync, renameSync, rmSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { fileURLToPath } from 'node:url'
 import { rolldown } from 'rolldown'
@@ -8,21 +8,24 @@ import { licenceNotices } from './build-licences.js'
 import { writeTypes } from './build-types.js'
 
 const ROOT = fileURLToPath(new URL('..', import.meta.url))
-const DIST = join(ROOT, 'dist')
+// Built aside and moved in when complete, so that whoever runs the command meanwhile finds the old one or the new.
+const ASIDE = mkdtempSync(join(ROOT, 'node_modules', '.stanchion-'))
+const DIST = join(ASIDE, 'dist')
+process.on('exit', () => rmSync(ASIDE, { recursive: true, force: true }))
 
-/** The command starts here: it says so when Node is too old, and lets Node 22 and later keep compiled code between runs. */
+/**
+ * The command starts here, to say so when Node is too old to read the rest. Node's compile cache is left off: it lies in a
+ * folder that others may write to, and the command writes nothing that it was not asked for.
+ */
 const LAUNCHER = `#!/usr/bin/env node
-import module from 'node:module'
 const [major, minor] = process.versions.node.split('.').map(Number)
 if (major < 20 || (major === 20 && minor < 19)) {
   console.error('stanchion: this is Node ' + process.versions.node + '; Node 20.19 or later is needed')
   process.exit(2)
 }
-module.enableCompileCache?.()
 await import('./cli.js')
 `
 
-rmSync(DIST, { recursive: true, force: true })
 const bundle = await rolldown({
   cwd: ROOT,
   input: { cli: 'src/cli/main.ts', index: 'src/index.ts' },
@@ -48,3 +51,7 @@ const assets = await copyAssets(ROOT, join(DIST, 'assets'))
 const modules = output.flatMap((chunk) => (chunk.type === 'chunk' ? chunk.moduleIds : []))
 writeFileSync(join(DIST, 'THIRD-PARTY-LICENSES.txt'), licenceNotices([...modules, ...assets]))
 writeTypes(ROOT, join(DIST, 'types'))
+
+const current = join(ROOT, 'dist')
+if (existsSync(current)) renameSync(current, join(ASIDE, 'old'))
+renameSync(DIST, current)
