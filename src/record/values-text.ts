@@ -1,0 +1,56 @@
+import type { Calculation, NamedLine, Value } from '../calculate/types.ts'
+import type { Profile } from '../quantity/profile.ts'
+import { showComparison } from '../quantity/show-comparison.ts'
+import { show, showUtilisation } from '../quantity/show.ts'
+import { profileOf } from './profile-of.ts'
+
+/**
+ * One line a value and a check, in the order of the document, the names of used sheets as `minor.chi`: what version
+ * control compares in place of the sheet's text.
+ */
+export function valuesText(calculation: Calculation): string {
+  const profile = profileOf(calculation)
+  return lines(calculation, '', profile)
+    .map((line) => `${line}\n`)
+    .join('')
+}
+
+function lines(calculation: Calculation, prefix: string, profile: Profile): string[] {
+  return calculation.blocks.flatMap(({ lines: own, used }) => {
+    if (used) return lines(used.calculation, `${prefix}${used.as}.`, profile)
+    return own.map((line) => {
+      if (line.kind === 'named') return namedText(line, prefix, profile)
+      const [demand, capacity] = showComparison(line.demand, line.capacity, profile)
+      const ratio = line.utilisation === undefined ? '' : ` ${showUtilisation(line.utilisation)}`
+      return `check ${prefix}${line.title}: ${demand.text} against ${capacity.text}${ratio} ${line.verdict === 'pass' ? 'OK' : 'NOT OK'}`
+    })
+  })
+}
+
+function namedText({ name, value, unit, statement }: NamedLine, prefix: string, profile: Profile): string {
+  const meaning = statement.meaning === undefined ? '' : `  # ${statement.meaning}`
+  return `${prefix}${name} = ${valueText(value, profile, unit)}${meaning}`
+}
+
+function valueText(value: Value, profile: Profile, unit?: NamedLine['unit']): string {
+  switch (value.type) {
+    case 'quantity':
+      return show(value, profile, unit ? { unit } : {}).text
+    case 'array':
+      return `[${value.si
+        .flat()
+        .map((si) => show({ si, dimension: value.dimension }, profile).text)
+        .join(', ')}]`
+    case 'text':
+    case 'truth':
+      return String(value.value)
+    case 'record':
+      return value.title
+    case 'list':
+      return value.items.map((item) => valueText(item, profile)).join('; ')
+    case 'function':
+      return `function of ${value.parameters.join(', ')}`
+    case 'model':
+      return value.description
+  }
+}
