@@ -44,11 +44,11 @@ export function finite(si: number, dimension: Dimension): Outcome<Quantity> {
 }
 
 export function add(a: Value, b: Value): Outcome<Numeric> {
-  return addOrSubtract(a, b, math.add as (x: unknown, y: unknown) => unknown)
+  return addOrSubtract(a, b, (x, y) => math.add(x as number, y as number))
 }
 
 export function subtract(a: Value, b: Value): Outcome<Numeric> {
-  return addOrSubtract(a, b, math.subtract as (x: unknown, y: unknown) => unknown)
+  return addOrSubtract(a, b, (x, y) => math.subtract(x as number, y as number))
 }
 
 function addOrSubtract(a: Value, b: Value, operation: (x: unknown, y: unknown) => unknown): Outcome<Numeric> {
@@ -75,7 +75,7 @@ export function power(base: Value, exponent: Value): Outcome<Quantity> {
   if (base.type !== 'quantity' || exponent.type !== 'quantity') return { refused: 'kind' }
   if (!isDimensionless(exponent.dimension)) return { refused: 'exponent' }
   if (base.si < 0 && !Number.isInteger(exponent.si)) return { refused: 'not-real' }
-  return take(math.pow(operand(base) as never, exponent.si))
+  return take(math.pow(operand(base), exponent.si))
 }
 
 export function negate(a: Value): Outcome<Numeric> {

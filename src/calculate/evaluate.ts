@@ -320,7 +320,7 @@ function listOf(formula: Node<'list'>, values: readonly Value[], scope: Scope): 
   }
   const { dimension } = first as Quantity
   if (values.every((value) => value.type === 'quantity'))
-    return { type: 'array', si: values.map((value) => (value as Quantity).si), dimension }
+    return { type: 'array', si: values.map((value) => value.si), dimension }
   const rows = values.map((value) => (value.type === 'array' ? value.si : undefined))
   const width = rows[0]?.length
   if (rows.some((row) => row === undefined || row.length !== width || row.some(Array.isArray))) {

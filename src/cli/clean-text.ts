@@ -1,5 +1,5 @@
 /** Control characters and the marks that turn or hide text, which a sheet could use to write over the terminal. */
-// eslint-disable-next-line no-control-regex
+
 const UNSAFE = /[\u0000-\u0008\u000b-\u001f\u007f-\u009f\u200e\u200f\u202a-\u202e\u2066-\u2069]/g
 
 /** Text that is safe on a terminal: control characters are shown as their code. Line feeds and tabs stay. */

@@ -100,7 +100,7 @@ function plain(value: Value): JsonObject {
     case 'quantity':
       return { si: value.si, dimension: dimensionName(value.dimension) }
     case 'array':
-      return { si: value.si as Json, dimension: dimensionName(value.dimension) }
+      return { si: value.si, dimension: dimensionName(value.dimension) }
     case 'text':
     case 'truth':
       return { value: value.value }

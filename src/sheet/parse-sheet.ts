@@ -1,9 +1,9 @@
-import type { Code, Heading, Nodes, Root } from 'mdast'
+import type { Heading, Nodes, Root } from 'mdast'
 import type { Position } from 'unist'
 import { visit } from 'unist-util-visit'
 import type { VFileMessage } from 'vfile-message'
 import { finding } from '../finding.ts'
-import { BLOCK_KINDS, RESERVED_KINDS, readBlock, type BlockKind } from './block.ts'
+import { BLOCK_KINDS, RESERVED_KINDS, readBlock } from './block.ts'
 import { readFrontMatter } from './front-matter.ts'
 import { parseMarkdown } from './markdown.ts'
 import { Places } from './places.ts'
@@ -126,7 +126,7 @@ function readBlocks(tree: Root, places: Places): { blocks: Block[]; problems: Pr
         })
         return
       }
-      const result = readBlock(places, node as Code & { lang: BlockKind }, heading)
+      const result = readBlock(places, node, heading)
       if (result.block) blocks.push(result.block)
       problems.push(...result.problems)
     }

@@ -1,6 +1,7 @@
 import type { Code, Construct, Effects, State, TokenizeContext } from 'micromark-util-types'
 import type { Extension as FromMarkdown } from 'mdast-util-from-markdown'
 import type { Processor } from 'unified'
+import type { Position } from 'unist'
 
 declare module 'micromark-util-types' {
   interface TokenTypeMap {
@@ -15,7 +16,7 @@ export interface SheetValueNode {
   type: 'sheetValue'
   /** The expression as written. */
   value: string
-  position?: import('unist').Position
+  position?: Position
 }
 
 declare module 'mdast' {
@@ -97,7 +98,7 @@ const construct: Construct = {
 const fromMarkdown: FromMarkdown = {
   enter: {
     sheetValue(token) {
-      this.enter({ type: 'sheetValue', value: '' } as SheetValueNode as never, token)
+      this.enter({ type: 'sheetValue', value: '' }, token)
     },
   },
   exit: {

@@ -45,6 +45,8 @@ const VERDICTS = {
   error: 'not calculated',
 } as const
 
+const NO_CHECKS = 'calculated; there is no check'
+
 function reportText({ path, calculation, verdict }: Prepared): string {
   const title = calculation ? `${calculation.sheet.meta.sheet}  ${calculation.sheet.meta.title}` : path
   const checks = calculation ? checksOf(calculation) : []

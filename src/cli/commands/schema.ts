@@ -23,7 +23,7 @@ export const schema: Command = {
         `the schemas are ${Object.keys(SCHEMAS).join(', ')}`,
       )
     const { schema: chosen, title } = SCHEMAS[name as keyof typeof SCHEMAS]
-    io.out(stableJson({ title, ...(z.toJSONSchema(chosen, { io: 'input' }) as object) } as never))
+    io.out(stableJson({ title, ...(z.toJSONSchema(chosen, { io: 'input' }) as object) }))
     return Promise.resolve(0)
   },
 }
