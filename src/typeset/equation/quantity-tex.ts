@@ -1,8 +1,8 @@
-import type { Formula, Operand, Quantity } from '../../calculate/types.ts'
+import type { Formula, Quantity } from '../../calculate/types.ts'
 import { DIMENSIONLESS } from '../../quantity/dimension.ts'
 import type { Profile } from '../../quantity/profile.ts'
 import { show, type Shown, type ShowOptions } from '../../quantity/show.ts'
-import { unitGap, unitTex, unitWords } from '../../quantity/units.ts'
+import { unitGap, unitTex, unitWords, type UnitExpression } from '../../quantity/units.ts'
 
 /** A quantity ready for print, in TeX: digits in groups, the unit upright. */
 export function shownTex(shown: Shown): string {
@@ -59,7 +59,10 @@ export function showLiteral(
 
 /** A quantity that a name stands for: as typed where it was typed in, else rounded, in the unit asked for where one was. */
 export function showOperand(
-  { unit, asTyped: typed }: Pick<Operand, 'unit' | 'asTyped'>,
+  {
+    unit,
+    asTyped: typed,
+  }: { readonly unit?: UnitExpression | undefined; readonly asTyped?: Formula | undefined },
   quantity: Quantity,
   profile: Profile,
 ): Shown {

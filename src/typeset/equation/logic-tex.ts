@@ -1,0 +1,53 @@
+import type { Formula, RelationOperator } from '../../calculate/types.ts'
+import { led, LEVEL, operand, type Print, type Printing } from './print.ts'
+
+const RELATIONS: Readonly<Record<RelationOperator, { readonly holds: string; readonly fails: string }>> = {
+  '<': { holds: '<', fails: '\\nless ' },
+  '<=': { holds: '\\leq ', fails: '\\nleq ' },
+  '>': { holds: '>', fails: '\\ngtr ' },
+  '>=': { holds: '\\geq ', fails: '\\ngeq ' },
+  '==': { holds: '=', fails: '\\neq ' },
+  '!=': { holds: '\\neq ', fails: '=' },
+}
+
+/** The sign of a relation; struck when it does not hold. */
+export function relationTex(operator: RelationOperator, holds = true): string {
+  return RELATIONS[operator][holds ? 'holds' : 'fails']
+}
+
+/** `a < b`, or a chain `0.2 \leq x \leq 3`. */
+export function printRelation(
+  { operands, operators }: Extract<Formula, { type: 'relation' }>,
+  printing: Printing,
+  holds = true,
+): Print {
+  const pieces = operands.map((side, i) => {
+    const print = operand(printing.print(side, printing), LEVEL.sum, true)
+    const operator = operators[i - 1]
+    if (operator === undefined) return print
+    const sign = relationTex(operator, holds)
+    return led(print, sign, `{}${sign}`)
+  })
+  return row(pieces, LEVEL.relation)
+}
+
+/** `a and b and c`, in words. */
+export function printConnective(formula: Extract<Formula, { type: 'binary' }>, printing: Printing): Print {
+  const { operator } = formula
+  const level = operator === 'and' ? LEVEL.and : LEVEL.or
+  const left = operand(printing.print(formula.left, printing), level, true)
+  const right = operand(printing.print(formula.right, printing), level + 1, true)
+  const word = led(right, `\\text{ ${operator} }`)
+  return row([left, word], level)
+}
+
+function row(pieces: readonly Print[], level: number): Print {
+  return {
+    tex: pieces.map(({ tex }) => tex).join(''),
+    level,
+    look: 'other',
+    ...(pieces[0]?.signed ? { signed: true } : {}),
+    ...(pieces.some(({ tall }) => tall) ? { tall: true } : {}),
+    split: () => pieces,
+  }
+}
