@@ -32,6 +32,11 @@ export const RULES = {
     'the YAML at the head of the sheet is missing, malformed or has a wrong field',
     'A sheet begins with front matter between two lines of `---`. It needs at least `sheet` (its number) and `title`. `stanchion new` writes one to start from.',
   ),
+  'bad-mathematics': rule(
+    'warning',
+    'mathematics in prose cannot be set',
+    'What stands between `$` signs is TeX as KaTeX knows it. The page shows it as written, marked, until it is corrected. Values that matter belong in blocks, where they are calculated.',
+  ),
   'bad-reference': rule(
     'error',
     'a file or method is named in a way that is not allowed',
@@ -131,6 +136,11 @@ export const RULES = {
     'error',
     'a file cannot be written',
     'The folder is missing, may not be written to, is full or holds something else of that name. No part of the file is left behind.',
+  ),
+  'picture-left-out': rule(
+    'warning',
+    'a picture is not on the page',
+    'The page loads nothing, neither from the network nor from a file, so that it says the same wherever it is opened. A picture has to be part of the text, as a `data:` address.',
   ),
   'reference-missing': rule(
     'note',

@@ -1,0 +1,78 @@
+import type { ElementContent, Nodes, Root as HastRoot } from 'hast'
+import { h } from 'hastscript'
+import type { Heading } from 'mdast'
+import { visit } from 'unist-util-visit'
+import type { CalculatedBlock, CalculatedInline } from '../calculate/types.ts'
+import { blockContent } from './block-content.ts'
+import { imageProblem, proseMathProblem } from './prose-problems.ts'
+import { proseMath } from './mathematics.ts'
+import { proseToHast, type OwnNode } from './prose.ts'
+import type { Scope } from './scope.ts'
+import { valueText } from './value-text.ts'
+
+/**
+ * A sheet in its author's order: the prose with values and mathematics put in, and each block as a checker reads it.
+ *
+ * @param ranks how much lower its headings stand than in the text
+ * @param prefix of the ids of its headings, for a sheet used by another
+ */
+export function sheetBody(scope: Scope, ranks: number, prefix = ''): ElementContent[] {
+  const { calculation } = scope
+  const blocks = new Map<unknown, CalculatedBlock>(calculation.blocks.map((block) => [block.block.node, block]))
+  const values = new Map(calculation.inlineValues.map((value) => [value.inline.span.start.offset, value]))
+  let depth = 0
+  const fill = (node: OwnNode): ElementContent[] | undefined => {
+    switch (node.type) {
+      case 'heading':
+        depth = node.depth
+        return sectionNumber(node, scope)
+      case 'code': {
+        const block = blocks.get(node)
+        return block && blockContent(block, scope, Math.max(depth, 1) + ranks + 1)
+      }
+      case 'sheetValue':
+        return inlineValue(values.get(node.position?.start.offset ?? -1), node.value, scope)
+      default:
+        return writtenMath(node, scope)
+    }
+  }
+  const tree = proseToHast(calculation.sheet.tree, { fill, document: { ranks, prefix } })
+  embeddedImagesOnly(tree, scope)
+  return tree.children as ElementContent[]
+}
+
+function sectionNumber(node: Heading, { page, outer }: Scope): ElementContent[] | undefined {
+  const section = outer ? undefined : page.numbers.begun.get(node)
+  return section && [h('span', { className: 'section-number' }, String(section.number)), { type: 'text', value: ' ' }]
+}
+
+function inlineValue(found: CalculatedInline | undefined, text: string, { page }: Scope): ElementContent[] {
+  if (!found?.value) {
+    return [h('span', { className: 'not-calculated' }, [h('code', text), ' not calculated'])]
+  }
+  const { value, operand, unit } = found
+  const how = { ...operand, ...(unit ? { unit } : {}) }
+  return [valueText(value, operand?.origin ?? 'derived', page, how)]
+}
+
+function writtenMath(node: Extract<OwnNode, { type: 'math' | 'inlineMath' }>, scope: Scope): ElementContent[] {
+  const display = node.type === 'math'
+  const set = proseMath(node.value, display)
+  if ('element' in set) return [display ? h('div', { className: 'display-math' }, [set.element]) : set.element]
+  scope.page.problems.push(proseMathProblem(node, set.problem, scope.calculation.sheet))
+  const mark = h('span', { className: 'not-calculated' }, [h('code', node.value), ' cannot be set as mathematics'])
+  return [display ? h('p', [mark]) : mark]
+}
+
+/** The page loads nothing: only pictures that are in the text itself are on it. */
+function embeddedImagesOnly(tree: HastRoot, scope: Scope): void {
+  visit(tree as Nodes, 'element', (element, index, parent) => {
+    if (element.tagName !== 'img' || !parent || index === undefined) return
+    const src = typeof element.properties.src === 'string' ? element.properties.src : ''
+    if (/^data:image\/(png|jpeg|gif|webp|svg\+xml)[;,]/.test(src)) return
+    scope.page.problems.push(imageProblem(element, src, scope.calculation.sheet))
+    parent.children[index] = h('span', { className: 'not-calculated' }, [
+      `picture ${src === '' ? 'without address' : src} is not on the page`,
+    ])
+  })
+}
