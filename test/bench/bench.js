@@ -22,9 +22,13 @@ const file = (name) => join(folder, name)
 const node = (...args) => execFileSync(process.execPath, args, { cwd: folder, stdio: 'pipe' })
 
 const entry = await bundleSource('test/bench/entry.ts')
-const { prepareSheet, parseSheet, typeset, htmlText } = await import(pathToFileURL(entry).href)
+const { prepareSheet, parseSheet, typeset, htmlText, digestOf } = await import(pathToFileURL(entry).href)
 const prepare = (text) => prepareSheet({ path: 'bench.md', text })
-const page = (text) => htmlText(typeset(prepare(text).calculation))
+const page = (text, forPdf = false) => {
+  const { calculation, findings, verdict } = prepare(text)
+  const digest = digestOf(calculation)
+  return htmlText(typeset(calculation, { findings, verdict, digest, programVersion: 'bench', forPdf }))
+}
 
 /** A line of the report: two times and their ratio against the limit that was set for it. */
 const line = (name, ours, base, limit, divisor = 1) => {
@@ -91,7 +95,8 @@ async function growth() {
 async function pdf() {
   const { findBrowser } = await importSource('src/publish/find-browser.ts')
   const browser = findBrowser()
-  const html = file('out/sheet.html')
+  const html = file('for-pdf.html')
+  writeFileSync(html, page(sheetOf(40), true))
   const sandbox = process.getuid?.() === 0 ? ['--no-sandbox'] : []
   const print = [
     `--print-to-pdf=${file('own.pdf')}`,
