@@ -193,18 +193,7 @@ function byDifferences(
   reference: number,
 ): number {
   const on = (s: number) => stateAlong(energy, at.x, mode, s, load, reference)
-  if (kind === 'limit point') {
-    const d = 0.02
-    const [a, b, c] = [on(-d), on(0), on(d)].map((state) => state?.load) as [number?, number?, number?]
-    if (a === undefined || b === undefined || c === undefined) return NaN
-    // The top of the parabola through three loads.
-    const bend = a - 2 * b + c
-    const raw = b - (c - a) ** 2 / (8 * bend)
-    const half = [on(-d / 2), on(d / 2)].map((state) => state?.load) as [number?, number?]
-    if (half[0] === undefined || half[1] === undefined) return NaN
-    const finer = b - (half[1] - half[0]) ** 2 / (8 * (half[0] - 2 * b + half[1]))
-    return (4 * finer - raw) / 3
-  }
+  if (kind === 'limit point') return topOfLoad((s) => on(s)?.load)
   const curvature = (p: number) => {
     const x = settled(energy, at.x, p, mode)
     return x
@@ -217,6 +206,19 @@ function byDifferences(
   const d = 1e-3 * load
   const [below, above] = [curvature(load - d), curvature(load + d)]
   return load - d + (2 * d * below) / (below - above)
+}
+
+/** The top of the load along the mode: of parabolas through three loads, ever closer until two of them agree. */
+function topOfLoad(load: (s: number) => number | undefined): number {
+  let before = NaN
+  for (let d = 0.02; d > 1e-4; d /= 2) {
+    const [a, b, c] = [load(-d), load(0), load(d)]
+    if (a === undefined || b === undefined || c === undefined) continue
+    const top = b - (c - a) ** 2 / (8 * (a - 2 * b + c))
+    if (Math.abs(top - before) <= 1e-8 * Math.abs(top)) return top
+    before = top
+  }
+  return before
 }
 
 /** The state with a given amount of the mode, and its load, from finite differences of the energy. */
