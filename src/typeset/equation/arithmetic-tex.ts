@@ -53,7 +53,7 @@ export function printProduct(formula: Binary, printing: Printing): Print {
     if (before === undefined) return factor
     const sign = printing.mode === 'numbers' ? '\\times ' : signBetween(before.look, factor.look)
     const shown = sign === THIN ? '\\cdot ' : sign
-    return led(factor, sign, `{}${shown}`)
+    return { ...led(factor, sign, `{}${shown}`), isFactor: true }
   })
   return { ...joined(pieces, LEVEL.product), look: factors.at(-1)?.look ?? 'other' }
 }

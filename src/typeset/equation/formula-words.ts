@@ -1,4 +1,5 @@
 import type { Formula, RelationOperator } from '../../calculate/types.ts'
+import { isDimensionless } from '../../quantity/dimension.ts'
 import { branchesOf } from './case-tex.ts'
 import { tableOf } from './lookup-tex.ts'
 import { meantBy } from './operand.ts'
@@ -117,20 +118,28 @@ function spokenBinary(formula: Extract<Formula, { type: 'binary' }>, speaking: S
 function spokenQuotient(left: Formula, right: Formula, speaking: Speaking): Spoken {
   const [over, under] = [spoken(left, speaking), spoken(right, speaking)]
   const isShort = over.level === LEVEL.atom && under.level === LEVEL.atom
-  const text = `${over.text} over ${under.text}`
   return isShort
-    ? { text, level: LEVEL.product }
-    : { text: `the fraction ${text}, end of fraction`, level: LEVEL.atom }
+    ? { text: `${over.text} over ${under.text}`, level: LEVEL.product }
+    : { text: `the fraction ${over.text} divided by ${under.text}, end of fraction`, level: LEVEL.atom }
 }
 
 function spokenPower(base: Formula, exponent: Formula, speaking: Speaking): Spoken {
-  const body = held(base, LEVEL.atom, speaking)
+  const inner = spoken(base, speaking)
+  const body = (inner.level < LEVEL.atom || isQuantity(base, speaking) ? inBrackets(inner) : inner).text
   const level = LEVEL.power
   if (exponent.type === 'number' && exponent.text === '2') return { text: `${body} squared`, level }
   if (exponent.type === 'number' && exponent.text === '3') return { text: `${body} cubed`, level }
-  const { text, level: inner } = spoken(exponent, speaking)
-  const end = inner === LEVEL.atom ? '' : ', end of power'
+  const power = spoken(exponent, speaking)
+  const { text } = power
+  const end = power.level === LEVEL.atom ? '' : ', end of power'
   return { text: `${body} to the power ${text}${end}`, level }
+}
+
+/** A number with a unit, whose power would be taken for the unit's. */
+function isQuantity(formula: Formula, { mode, operands }: Speaking): boolean {
+  if (formula.type === 'quantity') return true
+  const value = mode === 'numbers' ? meantBy(formula, operands)?.value : undefined
+  return value?.type === 'quantity' && !isDimensionless(value.dimension)
 }
 
 const RELATIONS: Readonly<Record<RelationOperator, readonly [holds: string, fails: string]>> = {
@@ -172,7 +181,12 @@ function spokenCase(formula: Extract<Formula, { type: 'case' }>, speaking: Speak
 }
 
 function fieldsWords({ fields }: Extract<Formula, { type: 'record' }>, speaking: Speaking): string {
-  return fields.map(({ key, value }) => `${symbolWords(key)} ${formulaWords(value, speaking)}`).join(', ')
+  return fields
+    .map(({ key, value }) => {
+      const [name, words] = [symbolWords(key), formulaWords(value, speaking)]
+      return name === words ? name : `${name} ${words}`
+    })
+    .join(', ')
 }
 
 const CALLS: ReadonlyMap<string, string> = new Map([
@@ -204,7 +218,7 @@ function spokenCall(call: Extract<Formula, { type: 'call' }>, speaking: Speaking
     const body = withoutGroup(arg)
     return body.type === 'record' ? fieldsWords(body, speaking) : formulaWords(body, speaking)
   })
-  const name = CALLS.get(call.name) ?? symbolWords(call.name)
+  const name = CALLS.get(call.name) ?? call.name.replaceAll('_', ' ')
   const end = call.args.length === 1 && isShort(call.args[0], speaking) ? '' : `, end of ${name}`
   return { text: `the ${name} of ${args.join(' and ')}${end}`, level: LEVEL.power }
 }

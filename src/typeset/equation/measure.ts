@@ -51,7 +51,7 @@ const DELIMITERS = new Set([
 const ENDS = new Set(['end', 'right', '\\'])
 /** What stands around and between the columns. */
 const ENVIRONMENTS: ReadonlyMap<string, { readonly around: number; readonly between: number }> = new Map([
-  ['dcases', { around: 1, between: 1 }],
+  ['dcases', { around: 1.4, between: 1 }],
   ['pmatrix', { around: 1.6, between: 1 }],
   ['array', { around: 1, between: 1 }],
   ['aligned', { around: 0, between: 0 }],
@@ -143,7 +143,7 @@ class Meter {
       case 'frac':
         return Math.max(this.group(scale, face), this.group(scale, face)) + 0.24
       case 'sqrt':
-        return this.index(scale) + 0.85 * scale + this.group(scale, face)
+        return this.index(scale) + 0.95 * scale + this.group(scale, face)
       case 'mathrm':
       case 'text':
       case 'textit':

@@ -19,6 +19,8 @@ export interface Print {
   readonly tall?: boolean
   /** A brace with rows of conditions, which nothing should follow in the same line. */
   readonly ownRow?: boolean
+  /** A factor of a product, whose sign is a poor place to break at. */
+  readonly isFactor?: boolean
   /** How it begins when it stands at the start of a row, where that differs: a product's sign is then shown. */
   readonly atStart?: string
   /** Smaller pieces that say the same when they stand one after the other, for a formula wider than the lane. */

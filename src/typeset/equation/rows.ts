@@ -1,6 +1,9 @@
 import { measure } from './measure.ts'
 import type { Print } from './print.ts'
 
+/** A factor in brackets is begun where it stands when at least this part of the row is left; a term never is. */
+const ROOM = 0.4
+
 /**
  * Breaks a print into rows: at its outermost operators first, and inside a part only where that part is wider than a whole
  * row. A row may still be too wide when nothing in it can be broken.
@@ -14,27 +17,24 @@ export function rowsOf(print: Print, first: number, rest: number): string[] {
   const waiting = [print]
   for (let piece = waiting.shift(); piece; piece = waiting.shift()) {
     const atStart = rows.at(-1) === ''
-    const width = measure(piece.tex)
+    const tex = atStart ? (piece.atStart ?? piece.tex) : piece.tex
+    const width = measure(tex)
+    const inPlace = piece.split && piece.isFactor && left > ROOM * rest
     if (width <= left) {
-      rows.push((rows.pop() ?? '') + (atStart && rows.length > 0 ? startOf(piece) : piece.tex))
+      rows.push((rows.pop() ?? '') + tex)
       left -= width
-    } else if (!atStart && measure(startOf(piece)) <= rest) {
+    } else if (!atStart && !inPlace) {
       rows.push('')
       left = rest
       waiting.unshift(piece)
+    } else if (piece.split) {
+      waiting.unshift(...piece.split())
+    } else if (piece.within) {
+      waiting.unshift(piece.within(left))
     } else {
-      const smaller = piece.split?.() ?? (piece.within && [piece.within(atStart ? left : rest)])
-      if (smaller && (smaller.length > 1 || piece.within)) waiting.unshift(...smaller)
-      else {
-        if (!atStart) rows.push('')
-        rows.push((rows.pop() ?? '') + startOf(piece))
-        left = 0
-      }
+      rows.push((rows.pop() ?? '') + tex)
+      left = 0
     }
   }
   return rows
-}
-
-function startOf(piece: Print): string {
-  return piece.atStart ?? piece.tex
 }
