@@ -4,7 +4,7 @@ import type { Heading } from 'mdast'
 import { visit } from 'unist-util-visit'
 import type { CalculatedBlock, CalculatedInline } from '../calculate/types.ts'
 import { blockContent } from './block-content.ts'
-import { imageProblem, proseMathProblem } from './prose-problems.ts'
+import { pictureProblem, proseMathProblem } from './prose-problems.ts'
 import { proseMath } from './mathematics.ts'
 import { proseToHast, type OwnNode } from './prose.ts'
 import type { Scope } from './scope.ts'
@@ -18,7 +18,9 @@ import { valueText } from './value-text.ts'
  */
 export function sheetBody(scope: Scope, ranks: number, prefix = ''): ElementContent[] {
   const { calculation } = scope
-  const blocks = new Map<unknown, CalculatedBlock>(calculation.blocks.map((block) => [block.block.node, block]))
+  const blocks = new Map<unknown, CalculatedBlock>(
+    calculation.blocks.map((block) => [block.block.node, block]),
+  )
   const values = new Map(calculation.inlineValues.map((value) => [value.inline.span.start.offset, value]))
   let depth = 0
   const fill = (node: OwnNode): ElementContent[] | undefined => {
@@ -43,7 +45,12 @@ export function sheetBody(scope: Scope, ranks: number, prefix = ''): ElementCont
 
 function sectionNumber(node: Heading, { page, outer }: Scope): ElementContent[] | undefined {
   const section = outer ? undefined : page.numbers.begun.get(node)
-  return section && [h('span', { className: 'section-number' }, String(section.number)), { type: 'text', value: ' ' }]
+  return (
+    section && [
+      h('span', { className: 'section-number' }, String(section.number)),
+      { type: 'text', value: ' ' },
+    ]
+  )
 }
 
 function inlineValue(found: CalculatedInline | undefined, text: string, { page }: Scope): ElementContent[] {
@@ -55,12 +62,18 @@ function inlineValue(found: CalculatedInline | undefined, text: string, { page }
   return [valueText(value, operand?.origin ?? 'derived', page, how)]
 }
 
-function writtenMath(node: Extract<OwnNode, { type: 'math' | 'inlineMath' }>, scope: Scope): ElementContent[] {
+function writtenMath(
+  node: Extract<OwnNode, { type: 'math' | 'inlineMath' }>,
+  scope: Scope,
+): ElementContent[] {
   const display = node.type === 'math'
-  const set = proseMath(node.value, display)
-  if ('element' in set) return [display ? h('div', { className: 'display-math' }, [set.element]) : set.element]
-  scope.page.problems.push(proseMathProblem(node, set.problem, scope.calculation.sheet))
-  const mark = h('span', { className: 'not-calculated' }, [h('code', node.value), ' cannot be set as mathematics'])
+  const set = proseMath(node.value, display, scope.page)
+  if ('ok' in set) return display ? [h('div', { className: 'display-math' }, set.ok)] : set.ok
+  scope.page.problems.push(proseMathProblem(node, set, scope.calculation.sheet))
+  const mark = h('span', { className: 'not-calculated' }, [
+    h('code', node.value),
+    ' cannot be set as mathematics',
+  ])
   return [display ? h('p', [mark]) : mark]
 }
 
@@ -70,7 +83,7 @@ function embeddedImagesOnly(tree: HastRoot, scope: Scope): void {
     if (element.tagName !== 'img' || !parent || index === undefined) return
     const src = typeof element.properties.src === 'string' ? element.properties.src : ''
     if (/^data:image\/(png|jpeg|gif|webp|svg\+xml)[;,]/.test(src)) return
-    scope.page.problems.push(imageProblem(element, src, scope.calculation.sheet))
+    scope.page.problems.push(pictureProblem(element, src, scope.calculation.sheet))
     parent.children[index] = h('span', { className: 'not-calculated' }, [
       `picture ${src === '' ? 'without address' : src} is not on the page`,
     ])

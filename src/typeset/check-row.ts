@@ -12,16 +12,21 @@ import { laneRow } from './working-lines.ts'
 export function checkRow(line: CheckLine, scope: Scope): Element {
   const { page } = scope
   const meaning = line.statement.meaning
-  return laneRow(line, scope, ['check', line.verdict === 'pass' ? 'ok' : 'not-ok'], [
-    ...(meaning === undefined ? [] : [h('p', { className: 'meaning' }, meaning)]),
-    h('div', { className: 'check-sides' }, [checkMath(line, page)]),
-    h('div', { className: 'check-outcome' }, [
-      h('span', { className: 'utilisation' }, utilisationText(line)),
-      utilisationBar(line),
-      verdictWord(line.verdict),
-    ]),
-    ...solverNotes(line.reports, page),
-  ])
+  return laneRow(
+    line,
+    scope,
+    ['check', line.verdict === 'pass' ? 'ok' : 'not-ok'],
+    [
+      ...(meaning === undefined ? [] : [h('p', { className: 'meaning' }, meaning)]),
+      h('div', { className: 'check-sides' }, checkMath(line, page)),
+      h('div', { className: 'check-outcome' }, [
+        h('span', { className: 'utilisation' }, utilisationText(line)),
+        utilisationBar(line),
+        verdictWord(line.verdict),
+      ]),
+      ...solverNotes(line.reports, page),
+    ],
+  )
 }
 
 export function verdictWord(verdict: Verdict): Element {

@@ -31,7 +31,12 @@ export function crossReferences(line: Line, scope: Scope): ElementContent[] {
   ]
   return groups.length === 0
     ? []
-    : [h('div', { className: 'from' }, ['from ', ...groups.flatMap((group, i) => (i === 0 ? group : ['; ', ...group]))])]
+    : [
+        h('div', { className: 'from' }, [
+          'from ',
+          ...groups.flatMap((group, i) => (i === 0 ? group : ['; ', ...group])),
+        ]),
+      ]
 }
 
 function links(numbers: ReadonlySet<string>): (ElementContent | string)[] {

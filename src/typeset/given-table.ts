@@ -16,12 +16,28 @@ export function givenTable(entries: readonly Entry[], scope: Scope): Element[] {
   return [
     h('table', { className: 'given-table' }, [
       h('caption', 'Inputs'),
-      h('colgroup', ['number', 'symbol', 'amount', 'meaning', 'evidence', 'tick'].map((name) => h('col', { className: name }))),
-      h('thead', [h('tr', HEADS.map(([name, className]) => h('th', { scope: 'col', className }, name)))]),
-      h('tbody', entries.map((entry) => row(entry, scope))),
+      h(
+        'colgroup',
+        ['number', 'symbol', 'amount', 'meaning', 'evidence', 'tick'].map((name) =>
+          h('col', { className: name }),
+        ),
+      ),
+      h('thead', [
+        h(
+          'tr',
+          HEADS.map(([name, className]) => h('th', { scope: 'col', className }, name)),
+        ),
+      ]),
+      h(
+        'tbody',
+        entries.map((entry) => row(entry, scope)),
+      ),
     ]),
   ]
 }
+
+/** In em of the mathematics: the column of meanings. */
+const FORMULA_WIDTH = 15
 
 const HEADS = [
   ['Line', 'number'],
@@ -52,11 +68,11 @@ function row(entry: Entry, scope: Scope): Element {
 function namedCells(line: NamedLine, scope: Scope): Element[] {
   const { page } = scope
   return [
-    h('th', { scope: 'row', className: 'symbol' }, [symbolMath(line.name, page)]),
+    h('th', { scope: 'row', className: 'symbol' }, symbolMath(line.name, page)),
     h('td', { className: 'amount' }, [amount(line, scope)]),
     h('td', { className: 'meaning' }, [
       ...words(line.statement.meaning),
-      ...(isPlain(line) ? [] : [h('div', { className: 'formula' }, [lineMath(line, page)])]),
+      ...(isPlain(line) ? [] : [h('div', { className: 'formula' }, lineMath(line, page, FORMULA_WIDTH))]),
       ...propertiesUsed(line, scope),
       ...solverNotes(line.reports, page),
     ]),
@@ -91,12 +107,16 @@ function propertiesUsed(line: NamedLine, { calculation, page }: Scope): ElementC
   })
   if (shown.length === 0) return []
   return [
-    h('ul', { className: 'properties' }, shown.map(({ key, value }) =>
-      h('li', [
-        symbolMath(`${line.name}.${key}`, page),
-        ' = ',
-        h('span', { className: ['value', 'looked-up'] }, plainValue(value, page)),
-      ]),
-    )),
+    h(
+      'ul',
+      { className: 'properties' },
+      shown.map(({ key, value }) =>
+        h('li', [
+          ...symbolMath(`${line.name}.${key}`, page),
+          ' = ',
+          h('span', { className: ['value', 'looked-up'] }, plainValue(value, page)),
+        ]),
+      ),
+    ),
   ]
 }

@@ -62,7 +62,7 @@ function brief(calculated: CalculatedBlock, inner: Scope): ElementContent[] {
   const { page } = inner
   const shown = inputs.map((line) =>
     h('li', [
-      symbolMath(line.name, page),
+      ...symbolMath(line.name, page),
       ' = ',
       valueText(line.value, line.origin, page, { ...(line.unit ? { unit: line.unit } : {}) }),
     ]),
@@ -71,7 +71,13 @@ function brief(calculated: CalculatedBlock, inner: Scope): ElementContent[] {
   return [
     ...(shown.length === 0
       ? []
-      : [h('div', { className: 'brief-inputs' }, [h('p', 'With'), h('ul', { className: 'properties' }, shown), ...notes])]),
+      : [
+          h('div', { className: 'brief-inputs' }, [
+            h('p', 'With'),
+            h('ul', { className: 'properties' }, shown),
+            ...notes,
+          ]),
+        ]),
     ...lines([...briefResults(used), ...limitsOf(used)], inner),
   ]
 }

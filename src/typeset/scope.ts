@@ -1,4 +1,4 @@
-import type { Element } from 'hast'
+import type { ElementContent } from 'hast'
 import type { VFileMessage } from 'vfile-message'
 import type { Calculation, UsedSheet } from '../calculate/types.ts'
 import type { Profile } from '../quantity/profile.ts'
@@ -12,7 +12,7 @@ export interface Page {
   /** What could not be printed as its author meant it; grows while the page is made. */
   readonly problems: VFileMessage[]
   /** Mathematics already set: a symbol stands on a page many times. */
-  readonly set: Map<string, Element>
+  readonly set: Map<string, ElementContent[]>
 }
 
 /** The sheet whose lines are being printed: the page's own, or one used by it. */

@@ -15,7 +15,12 @@ export function solverNote(report: SolverReport, page: Page): Element {
     shownText(show({ si, dimension: report.dimension }, page.profile, { figures: FIGURES }))
   const { second } = report
   return h('div', { className: 'solver' }, [
-    h('p', [h('code', report.question), ' ', ...value(report.value), ` by ${report.route}; ${endedWords(report)}`]),
+    h('p', [
+      h('code', report.question),
+      ' ',
+      ...value(report.value),
+      ` by ${report.route}; ${endedWords(report)}`,
+    ]),
     ...(second === undefined
       ? [h('p', 'No second route exists for this result.')]
       : [
@@ -40,7 +45,10 @@ const ENDED: Readonly<Record<SolverReport['status'], string>> = {
 }
 
 function endedWords({ status, iterations, residual }: SolverReport): string {
-  const after = iterations === undefined ? '' : ` after ${String(iterations)} ${iterations === 1 ? 'iteration' : 'iterations'}`
+  const after =
+    iterations === undefined
+      ? ''
+      : ` after ${String(iterations)} ${iterations === 1 ? 'iteration' : 'iterations'}`
   const left = residual === undefined || status === 'closed-form' ? '' : `, residual ${relative(residual)}`
   return `${ENDED[status]}${after}${left}`
 }
@@ -55,5 +63,7 @@ export function relative(value: number): string {
 const RAISED = '⁰¹²³⁴⁵⁶⁷⁸⁹'
 
 function superscript(whole: number): string {
-  return String(whole).replaceAll(/[-\d]/g, (digit) => (digit === '-' ? '⁻' : (RAISED[Number(digit)] ?? digit)))
+  return String(whole).replaceAll(/[-\d]/g, (digit) =>
+    digit === '-' ? '⁻' : (RAISED[Number(digit)] ?? digit),
+  )
 }

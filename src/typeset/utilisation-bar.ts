@@ -12,11 +12,15 @@ export function utilisationBar({ utilisation, verdict }: CheckLine): ElementCont
   if (utilisation === undefined) return { type: 'text', value: '' }
   const length = (Math.min(utilisation, END) / END) * WIDTH
   const limit = WIDTH / END
-  return s('svg', { className: ['bar', verdict], viewBox: `0 0 ${String(WIDTH)} ${String(HEIGHT)}`, ariaHidden: 'true' }, [
-    box(0, WIDTH, 'track'),
-    box(0, length, 'used'),
-    s('path', { className: 'limit', d: `M${round(limit)} -1V${String(HEIGHT + 1)}` }),
-  ])
+  return s(
+    'svg',
+    { className: ['bar', verdict], viewBox: `0 0 ${String(WIDTH)} ${String(HEIGHT)}`, ariaHidden: 'true' },
+    [
+      box(0, WIDTH, 'track'),
+      box(0, length, 'used'),
+      s('path', { className: 'limit', d: `M${round(limit)} -1V${String(HEIGHT + 1)}` }),
+    ],
+  )
 }
 
 function box(x: number, width: number, className: string): Element {

@@ -42,11 +42,11 @@ export function plainValue(
     case 'truth':
       return words(String(value.value))
     case 'record':
-      return value.of === 'record' ? [valueMath(value, page)] : words(value.title)
+      return value.of === 'record' ? valueMath(value, page) : words(value.title)
     case 'model':
       return words(value.description)
     default:
-      return [valueMath(value, page)]
+      return valueMath(value, page)
   }
 }
 

@@ -12,7 +12,13 @@ import { solverNotes } from './solver-note.ts'
 /** Numbered lines, each with its evidence beside it. */
 export function lines(entries: readonly Entry[], scope: Scope): Element[] {
   if (entries.length === 0) return []
-  return [h('ol', { className: 'lines' }, entries.map((entry) => oneLine(entry, scope)))]
+  return [
+    h(
+      'ol',
+      { className: 'lines' },
+      entries.map((entry) => oneLine(entry, scope)),
+    ),
+  ]
 }
 
 function oneLine(entry: Entry, scope: Scope): Element {
@@ -23,11 +29,16 @@ function oneLine(entry: Entry, scope: Scope): Element {
 /** What the line is, in words, then how it is found. */
 function workingLine(line: NamedLine, scope: Scope): Element {
   const meaning = line.statement.meaning
-  return laneRow(line, scope, ['working'], [
-    ...(meaning === undefined ? [] : [h('p', { className: 'meaning' }, meaning)]),
-    lineMath(line, scope.page),
-    ...solverNotes(line.reports, scope.page),
-  ])
+  return laneRow(
+    line,
+    scope,
+    ['working'],
+    [
+      ...(meaning === undefined ? [] : [h('p', { className: 'meaning' }, meaning)]),
+      ...lineMath(line, scope.page),
+      ...solverNotes(line.reports, scope.page),
+    ],
+  )
 }
 
 /** A row over both lanes: number, calculation, evidence, tick square. */
