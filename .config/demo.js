@@ -10,9 +10,8 @@ const OUT = join(ROOT, 'out')
 
 run(process.execPath, [join(ROOT, '.config/build.js')])
 const pdf = await browserThere()
-const sheets = sheetsUnder(join(ROOT, 'samples'))
-const status = print(sheets, pdf)
-tell(status, pdf)
+const { status, written } = print(sheetsUnder(join(ROOT, 'samples')), pdf)
+tell(status, written, pdf)
 // A sample whose check does not pass is a result too; only a sheet that was not calculated is a fault.
 process.exitCode = status > 1 ? status : 0
 
@@ -55,23 +54,21 @@ function sheetsUnder(folder) {
     .filter(isSheet)
 }
 
+/** Prints the sheets; the command says on standard output which files it wrote. */
 function print(sheets, pdf) {
-  const args = ['print', ...sheets, '-o', OUT, ...(pdf ? ['--pdf'] : [])]
-  const { status, error } = spawnSync(process.execPath, [join(ROOT, 'dist/stanchion.js'), ...args], {
-    stdio: 'inherit',
+  const args = [join(ROOT, 'dist/stanchion.js'), 'print', ...sheets, '-o', OUT, ...(pdf ? ['--pdf'] : [])]
+  const printed = spawnSync(process.execPath, args, {
+    stdio: ['ignore', 'pipe', 'inherit'],
+    encoding: 'utf8',
   })
-  if (error) throw error
-  return status ?? 2
+  if (printed.error) throw printed.error
+  return { status: printed.status ?? 2, written: printed.stdout.split('\n').filter(Boolean) }
 }
 
-function tell(status, pdf) {
-  const written = readdirSync(OUT, { recursive: true, encoding: 'utf8' }).filter((name) =>
-    /\.(html|pdf)$/.test(name),
-  )
-  const verdict =
-    ['every check passes', 'a check does not pass'][status] ?? 'a sheet was not calculated, see above'
+function tell(status, written, pdf) {
+  const verdict = ['every check passes', 'a check does not pass'][status] ?? 'something went wrong, see above'
   console.log(`\nThe samples are in ${OUT} (${pdf ? 'HTML and PDF' : 'HTML'}; ${verdict}):`)
-  for (const name of written.sort()) console.log(`  ${relative(process.cwd(), join(OUT, name))}`)
+  for (const file of written) console.log(`  ${relative(process.cwd(), file)}`)
 }
 
 function run(command, args) {
