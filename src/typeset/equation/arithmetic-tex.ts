@@ -10,6 +10,7 @@ import {
   type Print,
   type Printing,
 } from './print.ts'
+import { rowsOf } from './rows.ts'
 import { hasPrime } from './symbol.ts'
 
 type Binary = Extract<Formula, { type: 'binary' }>
@@ -91,13 +92,22 @@ function stacked({ left, right }: Binary, printing: Printing): Print {
     level: LEVEL.power,
     look: 'fraction',
     tall: true,
-    split: () => [...(inRow(over).split?.() ?? [inRow(over)]), led(inRow(under), '\\big/')],
+    within: (width) => inRows(over, under, width - FRACTION_BAR),
   }
 }
 
-/** Numerator or denominator of a fraction that is written with a slash. */
-function inRow(part: Print): Print {
-  return part.level < LEVEL.atom || part.signed || part.look === 'quantity' ? bracketed(part) : part
+/** How much a fraction's bar is wider than what stands over and under it, in em. */
+const FRACTION_BAR = 0.3
+
+/** A fraction wider than the lane, its numerator and denominator each in as many rows as it takes. */
+function inRows(over: Print, under: Print, width: number): Print {
+  const part = (print: Print) => {
+    const rows = rowsOf(print, width, width - 1)
+    if (rows.length === 1) return rows[0] ?? ''
+    const lines = rows.map((row, i) => (i === 0 ? `&${row}` : `&\\quad ${row}`))
+    return `\\begin{aligned}${lines.join('\\\\')}\\end{aligned}`
+  }
+  return { tex: `\\frac{${part(over)}}{${part(under)}}`, level: LEVEL.power, look: 'fraction', tall: true }
 }
 
 function slashed({ left, right }: Binary, printing: Printing): Print {

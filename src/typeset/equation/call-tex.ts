@@ -2,6 +2,7 @@ import type { Formula } from '../../calculate/types.ts'
 import { printArguments, printFields } from './list-tex.ts'
 import { printLookup } from './lookup-tex.ts'
 import { atom, bracketed, enclosed, LEVEL, withoutGroup, type Print, type Printing } from './print.ts'
+import { anglesIn } from './angles-in.ts'
 import { rewritten } from './rewritten.ts'
 import { symbolTex } from './symbol.ts'
 import { textTex } from './text-tex.ts'
@@ -40,7 +41,7 @@ export function printCall(call: Call, printing: Printing): Print {
   if (first && isRoot(name, args.length)) return root(name, first, second, printing)
   if (first && args.length === 1 && (name === 'inv' || name === 'transpose'))
     return matrixPower(first, name === 'inv' ? '-1' : '\\mathrm{T}', printing)
-  return named(SIGNS.get(name) ?? wordsTex(name), call, printing)
+  return named(SIGNS.get(name) ?? wordsTex(name), call, { ...printing, angles: anglesIn(call) })
 }
 
 function wordsTex(name: string): string {

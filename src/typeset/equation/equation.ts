@@ -78,11 +78,13 @@ function partsOf(line: NamedLine, profile: Profile): EquationParts {
   const saysSame = substituted.tex === symbolic.tex
   const isAlias = !line.unit && meantBy(withoutGroup(line.formula), line.operands) !== undefined
   const before = saysSame ? symbolic : substituted
+  // What a model is made from says all, unless numbers were put in: then its description tells how they were understood.
+  const isTold = line.value.type === 'model' && saysSame && line.formula.type === 'call'
   const because = becauseOf(line, numbers)
   return {
     symbolic,
     ...(saysSame ? {} : { substituted }),
-    ...(before.tex === result.tex || (isAlias && !saysSame) ? {} : { result }),
+    ...(before.tex === result.tex || (isAlias && !saysSame) || isTold ? {} : { result }),
     ...(because ? { because } : {}),
   }
 }

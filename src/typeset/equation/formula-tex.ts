@@ -18,12 +18,13 @@ export function formulaTex(formula: Formula, setting: FormulaSetting): string {
 }
 
 export function printingOf(setting: FormulaSetting): Printing {
-  const operands = setting.operands ?? new Map()
+  const operands: Printing['operands'] = setting.operands ?? new Map<string, never>()
   return {
     mode: 'symbols',
     branches: new Map(),
     isSheetFunction: (name) => operands.get(name)?.value.type === 'function',
     inline: false,
+    angles: 'as-shown',
     print: printFormula,
     ...setting,
     operands,
@@ -65,19 +66,19 @@ export function printFormula(formula: Formula, printing: Printing): Print {
 }
 
 function printBinary(formula: Extract<Formula, { type: 'binary' }>, printing: Printing): Print {
-  switch (formula.operator) {
+  const { operator } = formula
+  if (operator === 'and' || operator === 'or') return printConnective(formula, printing)
+  const reckoning = printing.angles === 'degrees' ? printing : { ...printing, angles: 'radians' as const }
+  switch (operator) {
     case '+':
     case '-':
-      return printSum(formula, printing)
+      return printSum(formula, reckoning)
     case '*':
-      return printProduct(formula, printing)
+      return printProduct(formula, reckoning)
     case '/':
-      return printQuotient(formula, printing)
+      return printQuotient(formula, reckoning)
     case '^':
-      return printPower(formula, printing)
-    case 'and':
-    case 'or':
-      return printConnective(formula, printing)
+      return printPower(formula, reckoning)
   }
 }
 

@@ -3,6 +3,8 @@ import { isDimensionless } from '../../quantity/dimension.ts'
 import { branchesOf } from './case-tex.ts'
 import { tableOf } from './lookup-tex.ts'
 import { meantBy } from './operand.ts'
+import { isPutIn, showPutIn } from './put-in.ts'
+import { anglesIn } from './angles-in.ts'
 import { LEVEL, withoutGroup, type Printing } from './print.ts'
 import { shownWords, showLiteral } from './quantity-tex.ts'
 import { rewritten } from './rewritten.ts'
@@ -16,7 +18,7 @@ interface Spoken {
 }
 
 /** Where a formula is in its line: symbols or numbers, with what is known of its names. */
-export type Speaking = Pick<Printing, 'mode' | 'profile' | 'operands' | 'branches'>
+export type Speaking = Pick<Printing, 'mode' | 'profile' | 'operands' | 'branches' | 'angles'>
 
 /** A formula as spoken. Brackets, fractions and roots are closed in words, so that it has one meaning by ear too. */
 export function formulaWords(formula: Formula, speaking: Speaking): string {
@@ -74,8 +76,12 @@ function spokenName(
   speaking: Speaking,
 ): Spoken {
   const meant = speaking.mode === 'numbers' ? meantBy(formula, speaking.operands) : undefined
-  if (meant && ['quantity', 'array', 'text', 'truth'].includes(meant.value.type)) {
-    const text = valueWords(meant.value, speaking.profile, meant)
+  if (meant && isPutIn(meant.value)) {
+    const { value } = meant
+    const text =
+      value.type === 'quantity'
+        ? shownWords(showPutIn(meant, value, speaking.profile, speaking.angles))
+        : valueWords(value, speaking.profile, meant)
     return { text, level: text.startsWith('minus') ? LEVEL.sum : LEVEL.atom }
   }
   if (formula.type === 'name') return { text: pathWords(formula.path), level: LEVEL.atom }
@@ -91,8 +97,10 @@ function spokenSign({ operator, body }: Extract<Formula, { type: 'unary' }>, spe
   return { text: `${word} ${held(body, LEVEL.power, speaking)}`, level: LEVEL.sum }
 }
 
-function spokenBinary(formula: Extract<Formula, { type: 'binary' }>, speaking: Speaking): Spoken {
+function spokenBinary(formula: Extract<Formula, { type: 'binary' }>, saying: Speaking): Spoken {
   const { operator, left, right } = formula
+  const isLogic = operator === 'and' || operator === 'or'
+  const speaking = isLogic || saying.angles === 'degrees' ? saying : { ...saying, angles: 'radians' as const }
   const between = (word: string, level: number, rightLevel = level + 1) => ({
     text: `${held(left, level, speaking)} ${word} ${held(right, rightLevel, speaking)}`,
     level,
@@ -209,9 +217,10 @@ const CALLS: ReadonlyMap<string, string> = new Map([
   ['ceil', 'whole number not below'],
 ])
 
-function spokenCall(call: Extract<Formula, { type: 'call' }>, speaking: Speaking): Spoken {
+function spokenCall(call: Extract<Formula, { type: 'call' }>, saying: Speaking): Spoken {
   const other = rewritten(call)
-  if (other) return spoken(other, speaking)
+  if (other) return spoken(other, saying)
+  const speaking = { ...saying, angles: anglesIn(call) }
   const lookup = call.name === 'lookup' ? tableOf(call) : undefined
   if (lookup) return spokenLookup(lookup, speaking)
   const args = call.args.map((arg) => {

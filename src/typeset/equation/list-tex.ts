@@ -19,7 +19,7 @@ export function printItems(items: readonly Print[]): Print {
     level: LEVEL.case,
     look: 'other',
     ...(pieces.some(({ tall }) => tall) ? { tall: true } : {}),
-    split: () => pieces,
+    ...(pieces.length > 0 ? { split: () => pieces } : {}),
   }
 }
 

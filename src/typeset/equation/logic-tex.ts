@@ -21,8 +21,12 @@ export function printRelation(
   printing: Printing,
   holds = true,
 ): Print {
+  const shown = operands.map((side) => printing.print(side, printing))
+  const degrees = shown.filter(({ tex }) => tex.endsWith('\\circ}')).length
+  const setting =
+    degrees === 0 || degrees === shown.length ? printing : { ...printing, angles: 'radians' as const }
   const pieces = operands.map((side, i) => {
-    const print = operand(printing.print(side, printing), LEVEL.sum, true)
+    const print = operand(printing.print(side, setting), LEVEL.sum, true)
     const operator = operators[i - 1]
     if (operator === undefined) return print
     const sign = relationTex(operator, holds)

@@ -1,7 +1,8 @@
-import type { Formula, Value } from '../../calculate/types.ts'
+import type { Formula } from '../../calculate/types.ts'
 import { meantBy } from './operand.ts'
 import { atom, bracketed, LEVEL, type Print, type Printing } from './print.ts'
-import { shownTex, showLiteral, showOperand } from './quantity-tex.ts'
+import { isPutIn, showPutIn } from './put-in.ts'
+import { shownTex, showLiteral } from './quantity-tex.ts'
 import type { Shown } from '../../quantity/show.ts'
 import { isSingleGlyph, ownedTex, pathTex } from './symbol.ts'
 import { valueTex } from './value-tex.ts'
@@ -29,19 +30,12 @@ export function printName(
   return put ?? printSymbol(formula, printing)
 }
 
-function numberPutIn(formula: Formula, { operands, profile }: Printing): Print | undefined {
+function numberPutIn(formula: Formula, { operands, profile, angles }: Printing): Print | undefined {
   const meant = meantBy(formula, operands)
   if (meant === undefined || !isPutIn(meant.value)) return undefined
   const { value } = meant
-  if (value.type === 'quantity') return shownPrint(showOperand(meant, value, profile))
+  if (value.type === 'quantity') return shownPrint(showPutIn(meant, value, profile, angles))
   return atom(valueTex(value, profile, meant), 'other', value.type === 'array' ? { tall: true } : {})
-}
-
-/** Models, functions and rows of tables have no number to put in: their names stay. */
-function isPutIn(value: Value): boolean {
-  return (
-    value.type === 'quantity' || value.type === 'array' || value.type === 'text' || value.type === 'truth'
-  )
 }
 
 function printSymbol(

@@ -1,5 +1,6 @@
 import type { Formula, Operand } from '../../calculate/types.ts'
 import type { Profile } from '../../quantity/profile.ts'
+import type { Angles } from './put-in.ts'
 
 /** How firmly a printed formula holds together: an operand that holds less firmly than its operator needs brackets. */
 export const LEVEL = { case: 0, or: 1, and: 2, relation: 3, sum: 4, product: 5, power: 6, atom: 7 } as const
@@ -21,6 +22,8 @@ export interface Print {
   readonly ownRow?: boolean
   /** A factor of a product, whose sign is a poor place to break at. */
   readonly isFactor?: boolean
+  /** In how many brackets it stands that began in an earlier row; each sets it in further. */
+  readonly depth?: number
   /** How it begins when it stands at the start of a row, where that differs: a product's sign is then shown. */
   readonly atStart?: string
   /** Smaller pieces that say the same when they stand one after the other, for a formula wider than the lane. */
@@ -40,6 +43,7 @@ export interface Printing {
   readonly isSheetFunction: (name: string) => boolean
   /** Inside a fraction or an exponent, where a quotient is written with a slash. */
   readonly inline: boolean
+  readonly angles: Angles
   readonly print: (formula: Formula, printing: Printing) => Print
 }
 
@@ -49,25 +53,26 @@ export function atom(tex: string, look: Look, more: Partial<Print> = {}): Print 
 
 /** With TeX before and after it; it stays as divisible as it was. */
 export function enclosed(print: Print, before: string, after = ''): Print {
-  const { split } = print
+  const { tex, atStart, split, within } = print
   return {
     ...print,
-    tex: before + print.tex + after,
-    ...(print.atStart === undefined ? {} : { atStart: before + print.atStart + after }),
+    tex: before + tex + after,
+    ...(atStart === undefined ? {} : { atStart: before + atStart + after }),
     ...(split ? { split: () => encloseAll(split(), before, after) } : {}),
+    ...(within ? { within: (width: number) => enclosed(within(width), before, after) } : {}),
   }
 }
 
-/** Led by a sign: `within` a row, and `atStart` of one. */
-export function led(print: Print, within: string, atStart = within): Print {
-  const { split } = print
-  const lead = (pieces: readonly Print[]) =>
-    pieces.map((piece, i) => (i === 0 ? led(piece, within, atStart) : piece))
+/** Led by a sign: `inside` a row, and `atStart` of one. */
+export function led(print: Print, inside: string, atStart = inside): Print {
+  const { split, within } = print
+  const first = (piece: Print, i: number) => (i === 0 ? led(piece, inside, atStart) : piece)
   return {
     ...print,
-    tex: within + print.tex,
+    tex: inside + print.tex,
     atStart: atStart + (print.atStart ?? print.tex),
-    ...(split ? { split: () => lead(split()) } : {}),
+    ...(split ? { split: () => split().map(first) } : {}),
+    ...(within ? { within: (width: number) => led(within(width), inside, atStart) } : {}),
   }
 }
 
@@ -80,15 +85,22 @@ export function encloseAll(pieces: readonly Print[], before: string, after: stri
 
 /** In brackets that are as high as it is. */
 export function bracketed(print: Print, open = '(', close = ')'): Print {
-  const { tex, tall, split } = print
+  const { tex, tall, split, within } = print
   const size = tall ? 'Big' : 'big'
   return {
     tex: tall ? `\\left${open}${tex}\\right${close}` : `${open}${tex}${close}`,
     level: LEVEL.atom,
     look: 'bracket',
     ...(tall ? { tall } : {}),
-    ...(split ? { split: () => encloseAll(split(), `\\${size}l${open}`, `\\${size}r${close}`) } : {}),
+    ...(split
+      ? { split: () => encloseAll(split().map(deeper), `\\${size}l${open}`, `\\${size}r${close}`) }
+      : {}),
+    ...(within ? { within: (width: number) => bracketed(within(width), open, close) } : {}),
   }
+}
+
+function deeper(piece: Print): Print {
+  return { ...piece, depth: (piece.depth ?? 0) + 1 }
 }
 
 /** As an operand of an operator that binds at `level`: in brackets when it holds less firmly, or begins with a minus. */

@@ -80,7 +80,8 @@ function spoken(tree: ElementContent[], words: string, forPdf: boolean): Element
   const visit = (node: ElementContent): void => {
     if (node.type !== 'element') return
     if (forPdf && hasClass(node, 'katex-html')) {
-      node.properties = { ...withoutHidden(node), role: 'img', ariaLabel: words }
+      delete node.properties.ariaHidden
+      Object.assign(node.properties, { role: 'img', ariaLabel: words })
       return
     }
     if (node.tagName === 'math' && words !== '') node.properties.alttext = words
@@ -88,11 +89,6 @@ function spoken(tree: ElementContent[], words: string, forPdf: boolean): Element
   }
   tree.forEach(visit)
   return tree
-}
-
-function withoutHidden({ properties }: Element): Element['properties'] {
-  const { ariaHidden: _hidden, ...rest } = properties
-  return rest
 }
 
 function hasClass({ properties }: Element, name: string): boolean {

@@ -10,7 +10,7 @@ import { valueWords } from './value-words.ts'
 /** A calculated line as spoken: the same parts as are printed. */
 export function equationWords(line: NamedLine, profile: Profile, parts: EquationParts): string {
   const { statement, formula, operands, branches, value, unit } = line
-  const speaking: Speaking = { mode: 'symbols', profile, operands, branches }
+  const speaking: Speaking = { mode: 'symbols', angles: 'as-shown', profile, operands, branches }
   const parameters =
     statement.kind === 'function'
       ? ` of ${statement.parameters.map(({ name }) => symbolWords(name)).join(' and ')}`
@@ -25,7 +25,7 @@ export function equationWords(line: NamedLine, profile: Profile, parts: Equation
 /** A check as spoken: 'N sub Ed equals 285 kilonewtons, is at most, N sub b Rd equals 734 kilonewtons'. */
 export function checkWords(line: CheckLine, profile: Profile, left: CheckSide, right: CheckSide): string {
   const { operands, branches, statement, verdict } = line
-  const speaking: Speaking = { mode: 'symbols', profile, operands, branches }
+  const speaking: Speaking = { mode: 'symbols', angles: 'as-shown', profile, operands, branches }
   const side = ({ formula, value, hasSymbols }: CheckSide) =>
     hasSymbols ? `${formulaWords(formula, speaking)} equals ${shownWords(value)}` : shownWords(value)
   const relation = relationWord(statement.relation, verdict === 'pass')
