@@ -15,10 +15,12 @@ export function blockContent(calculated: CalculatedBlock, scope: Scope, rank: nu
   switch (calculated.block.kind) {
     case 'given':
       // The inputs of a used sheet were calculated by its user: they are lines, not typed values.
-      return scope.outer ? lines(entriesOf(calculated), scope) : givenTable(entriesOf(calculated), scope)
+      return scope.outer
+        ? lines(entriesOf(calculated, scope.calculation), scope)
+        : givenTable(entriesOf(calculated, scope.calculation), scope)
     case 'working':
     case 'check':
-      return lines(entriesOf(calculated), scope)
+      return lines(entriesOf(calculated, scope.calculation), scope)
     case 'method':
       return [methodBlock(calculated, scope, rank)]
   }

@@ -45,21 +45,26 @@ export function sheetBody(scope: Scope, ranks: number, prefix = ''): ElementCont
 
 function sectionNumber(node: Heading, { page, outer }: Scope): ElementContent[] | undefined {
   const section = outer ? undefined : page.numbers.begun.get(node)
-  return (
-    section && [
-      h('span', { className: 'section-number' }, String(section.number)),
-      { type: 'text', value: ' ' },
-    ]
-  )
+  return section && [h('span', { className: 'section-number' }, `${String(section.number)} `)]
 }
 
-function inlineValue(found: CalculatedInline | undefined, text: string, { page }: Scope): ElementContent[] {
+function inlineValue(found: CalculatedInline | undefined, text: string, scope: Scope): ElementContent[] {
   if (!found?.value) {
     return [h('span', { className: 'not-calculated' }, [h('code', text), ' not calculated'])]
   }
-  const { value, operand, unit } = found
+  const { value, operand, unit, formula } = found
   const how = { ...operand, ...(unit ? { unit } : {}) }
-  return [valueText(value, operand?.origin ?? 'derived', page, how)]
+  const origin = operand?.origin ?? 'derived'
+  const from = origin === 'carried' && formula?.type === 'name' ? lender(formula.path, scope) : undefined
+  // What a method gives is calculated on this page.
+  const shown = valueText(value, origin === 'carried' && !from ? 'derived' : origin, scope.page, how)
+  return from === undefined ? [shown] : [shown, h('span', { className: 'lender' }, `\u00a0${from}`)]
+}
+
+/** The id of the sheet that lends a value; nothing for a method, which is worked on this page. */
+function lender([first = '']: readonly string[], { calculation }: Scope): string | undefined {
+  const used = calculation.usedSheets.get(first)
+  return used && !used.builtIn ? used.calculation.sheet.meta.sheet : undefined
 }
 
 function writtenMath(

@@ -20,7 +20,7 @@ export function checkRow(line: CheckLine, scope: Scope): Element {
       ...(meaning === undefined ? [] : [h('p', { className: 'meaning' }, meaning)]),
       h('div', { className: 'check-sides' }, checkMath(line, page)),
       h('div', { className: 'check-outcome' }, [
-        h('span', { className: 'utilisation' }, utilisationText(line)),
+        h('span', { className: 'utilisation' }, ['utilisation ', h('strong', utilisationText(line))]),
         utilisationBar(line),
         verdictWord(line.verdict),
       ]),

@@ -4,7 +4,7 @@ import type { Calculation, SolverReport, UsedSheet } from '../calculate/types.ts
 import { show } from '../quantity/show.ts'
 import { usedBy } from './checks-of-page.ts'
 import { lineLink } from './cross-references.ts'
-import { entriesOf, isFailure } from './entries.ts'
+import { allEntries, isFailure } from './entries.ts'
 import type { Page } from './scope.ts'
 import { relative } from './solver-note.ts'
 import { shownText } from './value-text.ts'
@@ -77,13 +77,11 @@ function sheetRow({ as, id, builtIn, calculation }: UsedSheet): Element {
 }
 
 function solversTable(calculation: Calculation, page: Page): Element[] {
-  const rows = calculation.blocks
-    .flatMap(entriesOf)
-    .flatMap((entry) =>
-      isFailure(entry)
-        ? []
-        : entry.reports.map((report) => solverRow(page.numbers.of.get(entry), report, page)),
-    )
+  const rows = allEntries(calculation).flatMap((entry) =>
+    isFailure(entry)
+      ? []
+      : entry.reports.map((report) => solverRow(page.numbers.of.get(entry), report, page)),
+  )
   if (rows.length === 0) return []
   return [
     h('table', { className: 'solvers' }, [

@@ -12,7 +12,7 @@ export function evidence(line: Line, scope: Scope): ElementContent[] {
     ...ofStatement(line.statement),
     ...bindingReference(line),
     ...tableSource(line),
-    ...byDefault(line),
+    ...byDefault(line, scope),
     ...crossReferences(line, scope),
   ]
 }
@@ -39,8 +39,8 @@ export function sourceOf(value: { readonly type: string }): string | undefined {
   return value.type === 'record' ? (value as RecordValue).source : undefined
 }
 
-function byDefault(line: Line): ElementContent[] {
-  return line.kind === 'named' && line.byDefault
+function byDefault(line: Line, scope: Scope): ElementContent[] {
+  return line.kind === 'named' && line.byDefault && scope.used?.builtIn
     ? [h('div', { className: 'from' }, 'the method’s own value')]
     : []
 }

@@ -19,7 +19,8 @@ export interface LineNumbers {
 }
 
 /** Sections begin at the headings of the sheet's highest rank; lines above the first of them are in section 0. */
-export function numberLines({ sheet, blocks }: Calculation): LineNumbers {
+export function numberLines(calculation: Calculation): LineNumbers {
+  const { sheet, blocks } = calculation
   const top = sheet.tree.children.filter((node): node is Heading => node.type === 'heading')
   const rank = Math.min(...top.map(({ depth }) => depth))
   const blockOf = new Map(blocks.map((block) => [block.block.node as unknown, block]))
@@ -37,7 +38,7 @@ export function numberLines({ sheet, blocks }: Calculation): LineNumbers {
     const block = blockOf.get(node)
     const section = sections.at(-1)
     if (!block || !section) continue
-    for (const entry of entriesOf(block)) {
+    for (const entry of entriesOf(block, calculation)) {
       const number = `${String(section.number)}.${String(++line).padStart(2, '0')}`
       of.set(entry, number)
       section.first ??= number

@@ -13,7 +13,7 @@ export function marginTexts(
   { digest, programVersion }: { readonly digest?: string | undefined; readonly programVersion: string },
   outcome: Outcome,
 ): MarginTexts {
-  const revision = meta.revision === undefined ? '' : `   revision ${meta.revision}`
+  const revision = meta.revision === undefined ? '' : `\u00a0\u00a0\u00a0revision ${meta.revision}`
   return {
     'head-left': [meta.project, meta.title].filter(Boolean).join('\n'),
     'head-alarm': alarmWords(outcome),

@@ -8,6 +8,7 @@ import { symbolMath } from './mathematics.ts'
 import { within, type Scope } from './scope.ts'
 import { solverNotes } from './solver-note.ts'
 import { valueText } from './value-text.ts'
+import { resultsTable } from './results-table.ts'
 import { lines } from './working-lines.ts'
 
 /** A used sheet where it is used: its title and source, then its steps with this sheet's numbers, or its results when `brief`. */
@@ -78,6 +79,7 @@ function brief(calculated: CalculatedBlock, inner: Scope): ElementContent[] {
             ...notes,
           ]),
         ]),
-    ...lines([...briefResults(used), ...limitsOf(used)], inner),
+    ...resultsTable(briefResults(used, inner.outer?.calculation ?? inner.calculation), inner),
+    ...lines(limitsOf(used), inner),
   ]
 }

@@ -54,7 +54,7 @@ interface Use {
 
 function printedUses(calculation: Calculation): Use[] {
   return [...calculation.usedSheets.values()].flatMap((use) => {
-    const lines = use.brief ? briefResults(use) : [...use.calculation.names.values()]
+    const lines = use.brief ? briefResults(use, calculation) : [...use.calculation.names.values()]
     const inner = use.brief ? [] : printedUses(use.calculation)
     return lines.length > 0 ? [{ use, lines }, ...inner] : inner
   })

@@ -4,14 +4,14 @@ import type { Calculation } from '../calculate/types.ts'
 import type { PageChecks } from './checks-of-page.ts'
 import { usedBy } from './checks-of-page.ts'
 import { lineLink } from './cross-references.ts'
-import { entriesOf, isFailure } from './entries.ts'
+import { allEntries, isFailure } from './entries.ts'
 import type { Page } from './scope.ts'
 
 type Point = readonly (ElementContent | string)[]
 
 /** What stands against relying on the sheet as it is: holds, limits not kept, lines not calculated, what is not verified. */
 export function openPoints(calculation: Calculation, checks: PageChecks, page: Page): Element[] {
-  const entries = calculation.blocks.flatMap(entriesOf)
+  const entries = allEntries(calculation)
   const at = (entry: (typeof entries)[number]): Point => {
     const number = page.numbers.of.get(entry)
     return number === undefined ? [] : ['Line ', lineLink(number), ': ']

@@ -32,7 +32,7 @@ export function peopleTable(meta: FrontMatter): Element {
 
 /** The same in one line, for the foot of every page. */
 export function peopleLine(meta: FrontMatter): string {
-  return ROLES.map((role) => `${roleWord(role)} ${inLine(meta[role])}`).join('   ')
+  return ROLES.map((role) => `${roleWord(role)} ${inLine(meta[role])}`).join('\u00a0\u00a0\u00a0 ')
 }
 
 function inLine(person: Person | undefined): string {

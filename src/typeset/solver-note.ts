@@ -19,7 +19,7 @@ export function solverNote(report: SolverReport, page: Page): Element {
       h('code', report.question),
       ' ',
       ...value(report.value),
-      ` by ${report.route}; ${endedWords(report)}`,
+      ` by ${report.route}${endedWords(report)}`,
     ]),
     ...(second === undefined
       ? [h('p', 'No second route exists for this result.')]
@@ -36,9 +36,8 @@ export function solverNote(report: SolverReport, page: Page): Element {
 
 const FIGURES = 6
 
-const ENDED: Readonly<Record<SolverReport['status'], string>> = {
+const ENDED: Readonly<Record<Exclude<SolverReport['status'], 'closed-form'>, string>> = {
   'bad-bracket': 'no bracket was found',
-  'closed-form': 'in closed form',
   converged: 'converged',
   'iteration-limit': 'stopped at the limit of iterations',
   'not-finite': 'ended without a finite value',
@@ -49,8 +48,8 @@ function endedWords({ status, iterations, residual }: SolverReport): string {
     iterations === undefined
       ? ''
       : ` after ${String(iterations)} ${iterations === 1 ? 'iteration' : 'iterations'}`
-  const left = residual === undefined || status === 'closed-form' ? '' : `, residual ${relative(residual)}`
-  return `${ENDED[status]}${after}${left}`
+  const left = residual === undefined ? '' : `, residual ${relative(residual)}`
+  return status === 'closed-form' ? '' : `; ${ENDED[status]}${after}${left}`
 }
 
 /** A small relative number in one figure and a power of ten: `3×10⁻⁹`; zero is `0`. */
