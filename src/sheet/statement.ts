@@ -51,13 +51,13 @@ export function splitStatements(places: Places, start: number, end: number): Rea
         },
       })
     } else if (trimmed !== '') {
-      result.push({
-        ok: {
-          start: at + lead,
-          text: trimmed,
-          annotation: readAnnotation(text.slice(statement.bodyEnd, statement.end)),
-        },
-      })
+      const raw = text.slice(statement.bodyEnd, statement.end)
+      const odd = malformedHold(raw)
+      result.push(
+        odd === undefined
+          ? { ok: { start: at + lead, text: trimmed, annotation: readAnnotation(raw) } }
+          : { problem: holdProblem(places, statement.bodyEnd + odd) },
+      )
     }
     at = statement.end + 1
   }
@@ -103,6 +103,21 @@ function scanStatement(text: string, start: number, end: number): Scan {
 function endOfLine(text: string, from: number, end: number): number {
   const found = text.indexOf('\n', from)
   return found < 0 || found > end ? end : found
+}
+
+/** Where an `@hold` stands that does not have the form it must have; it would be printed as plain text and not counted. */
+function malformedHold(raw: string): number | undefined {
+  const at = /^\s*@/.test(raw) ? raw.indexOf('@') : raw.search(/@hold\b/i)
+  return at < 0 || HOLD.test(raw) ? undefined : at
+}
+
+function holdProblem(places: Places, at: number): Problem {
+  return {
+    rule: 'bad-block',
+    message: 'a hold says what is awaited, in quotation marks, at the end of the statement',
+    hint: 'write for example `@hold "mill certificate"`',
+    span: places.span(at, at + 1),
+  }
 }
 
 const HOLD = /@hold\s+(?:"([^"\n]*)"|'([^'\n]*)')\s*$/
