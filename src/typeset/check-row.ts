@@ -3,7 +3,7 @@ import { h } from 'hastscript'
 import type { CheckLine, Verdict } from '../calculate/types.ts'
 import { showUtilisation } from '../quantity/show.ts'
 import { utilisationBar } from './utilisation-bar.ts'
-import { checkMath } from './mathematics.ts'
+import { checkMath, checkMathInText } from './mathematics.ts'
 import type { Scope } from './scope.ts'
 import { solverNotes } from './solver-note.ts'
 import { laneRow } from './working-lines.ts'
@@ -12,6 +12,7 @@ import { laneRow } from './working-lines.ts'
 export function checkRow(line: CheckLine, scope: Scope): Element {
   const { page } = scope
   const meaning = line.statement.meaning
+  if (line.validity || scope.used?.brief) return slimRow(line, scope)
   return laneRow(
     line,
     scope,
@@ -25,6 +26,25 @@ export function checkRow(line: CheckLine, scope: Scope): Element {
         verdictWord(line.verdict),
       ]),
       ...solverNotes(line.reports, page),
+    ],
+  )
+}
+
+/** A limit of use, which is kept or not: it has no utilisation to speak of. */
+function slimRow(line: CheckLine, scope: Scope): Element {
+  const { meaning } = line.statement
+  return laneRow(
+    line,
+    scope,
+    ['check', 'slim', line.verdict === 'pass' ? 'ok' : 'not-ok'],
+    [
+      h('p', { className: 'meaning' }, [
+        ...(meaning === undefined ? [] : [`${meaning}: `]),
+        ...checkMathInText(line, scope.page),
+        ' ',
+        verdictWord(line.verdict),
+      ]),
+      ...solverNotes(line.reports, scope.page),
     ],
   )
 }

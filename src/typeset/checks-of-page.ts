@@ -27,7 +27,7 @@ export function checksOfPage(calculation: Calculation): PageChecks {
     ...used.flatMap(({ as, calculation: inner }) =>
       checksIn(inner)
         .filter(({ validity }) => validity)
-        .map((check) => ({ method: `${inner.sheet.meta.sheet} as ${as}`, check })),
+        .map((check) => ({ method: `${inner.sheet.meta.sheet}, used as ${as}`, check })),
     ),
   ]
   // A failed check governs wherever it stands; else the sheet's own checks say how far its design is used.

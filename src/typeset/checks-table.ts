@@ -1,6 +1,6 @@
 import type { Element, ElementContent } from 'hast'
 import { h } from 'hastscript'
-import type { CheckLine } from '../calculate/types.ts'
+import type { CheckLine, Verdict } from '../calculate/types.ts'
 import { showComparison } from '../quantity/show-comparison.ts'
 import { utilisationText, verdictWord } from './check-row.ts'
 import type { PageChecks } from './checks-of-page.ts'
@@ -22,7 +22,7 @@ export function checksTable(checks: PageChecks, page: Page): Element[] {
     ),
     group(
       'Limits of use of methods',
-      checks.limits.map(({ method, check }) => row(check, `${check.title} (${method})`, checks, page)),
+      limitUses(checks).flatMap((use) => limitRows(use, page)),
     ),
   ].flat()
   if (groups.length === 0) return []
@@ -80,6 +80,52 @@ function row(check: CheckLine, title: string, { governing }: PageChecks, page: P
       h('td', { className: 'verdict' }, [verdictWord(check.verdict)]),
     ],
   )
+}
+
+interface LimitUse {
+  readonly method: string
+  readonly kept: CheckLine[]
+  readonly broken: CheckLine[]
+}
+
+function limitUses({ limits }: PageChecks): LimitUse[] {
+  const uses = new Map<string, LimitUse>()
+  for (const { method, check } of limits) {
+    const use = uses.get(method) ?? { method, kept: [], broken: [] }
+    uses.set(method, use)
+    const side = check.verdict === 'pass' ? use.kept : use.broken
+    side.push(check)
+  }
+  return [...uses.values()]
+}
+
+/** The limits that are kept in one row for each use of a method; each that is not in its own. */
+function limitRows({ method, kept, broken }: LimitUse, page: Page): Element[] {
+  const [first, last] = [kept[0], kept.at(-1)]
+  const ends = [...new Set([first, last])].flatMap((check) => (check && page.numbers.of.get(check)) ?? [])
+  const together =
+    kept.length === 0
+      ? []
+      : [
+          limitRow(
+            ends,
+            `${method}: ${kept.length === 1 ? 'its limit is' : `its ${String(kept.length)} limits are`} kept`,
+            'pass',
+          ),
+        ]
+  const each = broken.map((check) =>
+    limitRow([page.numbers.of.get(check) ?? ''], `${method}: ${check.title}`, 'fail'),
+  )
+  return [...each, ...together]
+}
+
+function limitRow(ends: readonly string[], title: string, verdict: Verdict): Element {
+  const numbers = ends.flatMap((number, i) => (i === 0 ? [lineLink(number)] : [' – ', lineLink(number)]))
+  return h('tr', { className: verdict === 'pass' ? 'ok' : 'not-ok' }, [
+    h('td', { className: 'number' }, numbers),
+    h('th', { scope: 'row', className: 'title', colSpan: 5 }, title),
+    h('td', { className: 'verdict' }, [verdictWord(verdict)]),
+  ])
 }
 
 const GOVERNS: ElementContent[] = [

@@ -22,6 +22,7 @@ export function givenTable(entries: readonly Entry[], scope: Scope): Element[] {
         valueTable(
           'Inputs',
           entries.flatMap((entry) => row(entry, scope)),
+          entries,
         ),
       ]
 }

@@ -25,6 +25,12 @@ export function checkMath(line: CheckLine, page: Page, width?: number): ElementC
   return renderMath(tex, { display: true, words, forPdf: page.forPdf })
 }
 
+/** The same in a line of text. */
+export function checkMathInText(line: CheckLine, page: Page): ElementContent[] {
+  const { tex, words } = checkEquation(line, page.profile)
+  return renderMath(tex, { display: false, words, forPdf: page.forPdf })
+}
+
 /** A value that is more than one number: a matrix, a list of states. */
 export function valueMath(value: Value, page: Page): ElementContent[] {
   return inText(valueTex(value, page.profile), '', page)

@@ -5,7 +5,7 @@ import type { MethodBlock } from '../sheet/types.ts'
 import { sheetBody } from './body.ts'
 import { briefResults, limitsOf } from './entries.ts'
 import { symbolMath } from './mathematics.ts'
-import { within, type Scope } from './scope.ts'
+import { within, type Page, type Scope } from './scope.ts'
 import { solverNotes } from './solver-note.ts'
 import { valueText } from './value-text.ts'
 import { resultsTable } from './results-table.ts'
@@ -23,7 +23,7 @@ export function methodBlock(calculated: CalculatedBlock, scope: Scope, rank: num
   }
   const inner = within(scope, used)
   return h('section', { className: ['method', ...(used.brief ? ['brief'] : [])] }, [
-    h('header', [h(heading(rank), titleOf(used)), ...sourceNotes(used)]),
+    h('header', [h(heading(rank), titleOf(used)), ...sourceNotes(used, scope.page)]),
     ...(used.brief ? brief(calculated, inner) : sheetBody(inner, rank, `${block.as}-`)),
   ])
 }
@@ -35,12 +35,14 @@ function titleOf({ calculation, builtIn }: UsedSheet): string {
   return builtIn ? title : `${sheet} ${title}`
 }
 
-function sourceNotes(used: UsedSheet): Element[] {
+function sourceNotes(used: UsedSheet, { cautioned }: Page): Element[] {
   const { source, clause, revision, unverified } = used.calculation.sheet.meta
   const from = used.builtIn
     ? [source, clause === undefined ? undefined : `clause ${clause}`]
     : [revision === undefined ? 'no revision' : `revision ${revision}`, source]
   const parts: (string | Element)[] = from.flatMap((part) => (part === undefined ? [] : [part, '; ']))
+  const isRepeated = cautioned.has(used.id)
+  cautioned.add(used.id)
   return [
     h('p', { className: 'method-source' }, [
       ...parts,
@@ -48,11 +50,19 @@ function sourceNotes(used: UsedSheet): Element[] {
       h('code', used.id),
       ', used as ',
       h('code', used.as),
+      ...(unverified !== undefined && isRepeated ? ['; not verified: see its first use'] : []),
     ]),
-    ...(unverified === undefined
+    ...(unverified === undefined || isRepeated
       ? []
       : [h('p', { className: 'unverified' }, [h('strong', 'Not verified: '), unverified])]),
   ]
+}
+
+/** A bound name is shown as where it comes from: typed, or in the unit asked for there. */
+function howOf(line: NamedLine) {
+  const { formula, operands, unit } = line
+  if (formula.type === 'name' && !unit) return operands.get(formula.path.join('.')) ?? {}
+  return { asTyped: formula, ...(unit ? { unit } : {}) }
 }
 
 /** The inputs in one paragraph, the results and the limits of use as lines. */
@@ -62,11 +72,7 @@ function brief(calculated: CalculatedBlock, inner: Scope): ElementContent[] {
   const inputs = calculated.lines.filter((line): line is NamedLine => line.kind === 'named')
   const { page } = inner
   const shown = inputs.map((line) =>
-    h('li', [
-      ...symbolMath(line.name, page),
-      ' = ',
-      valueText(line.value, line.origin, page, { ...(line.unit ? { unit: line.unit } : {}) }),
-    ]),
+    h('li', [...symbolMath(line.name, page), ' = ', valueText(line.value, line.origin, page, howOf(line))]),
   )
   const notes = inputs.flatMap(({ reports }) => solverNotes(reports, page))
   return [

@@ -4,7 +4,7 @@ import type { Calculation } from '../calculate/types.ts'
 import type { PageChecks } from './checks-of-page.ts'
 import { usedBy } from './checks-of-page.ts'
 import { lineLink } from './cross-references.ts'
-import { allEntries, isFailure } from './entries.ts'
+import { allEntries, isFailure, type Entry } from './entries.ts'
 import type { Page } from './scope.ts'
 
 type Point = readonly (ElementContent | string)[]
@@ -19,7 +19,7 @@ export function openPoints(calculation: Calculation, checks: PageChecks, page: P
   const holds = entries.flatMap((entry): Point[] => {
     const hold =
       entry.statement.hold ?? (!isFailure(entry) && entry.kind === 'named' ? entry.boundBy?.hold : undefined)
-    return hold === undefined ? [] : [[...at(entry), hold]]
+    return hold === undefined ? [] : [[...at(entry), ...nameOf(entry), hold]]
   })
   const failures = entries
     .filter(isFailure)
@@ -43,6 +43,10 @@ export function openPoints(calculation: Calculation, checks: PageChecks, page: P
       parts.length > 0 ? parts : [h('p', 'No hold is open, and every line is calculated.')],
     ),
   ]
+}
+
+function nameOf({ statement }: Entry): Point {
+  return statement.kind === 'acceptance' ? [] : [h('code', statement.name), ', ']
 }
 
 function list(title: string, points: readonly Point[]): Element[] {

@@ -15,6 +15,7 @@ export function resultsTable(results: readonly NamedLine[], scope: Scope): Eleme
         valueTable(
           'Results',
           results.map((line) => row(line, scope)),
+          results,
         ),
       ]
 }

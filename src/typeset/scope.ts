@@ -11,6 +11,8 @@ export interface Page {
   readonly forPdf: boolean
   /** What could not be printed as its author meant it; grows while the page is made. */
   readonly problems: VFileMessage[]
+  /** The methods whose note on what is not verified is on the page already. */
+  readonly cautioned: Set<string>
   /** Mathematics already set: a symbol stands on a page many times. */
   readonly set: Map<string, ElementContent[]>
 }

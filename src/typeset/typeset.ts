@@ -54,6 +54,7 @@ export function typeset(calculation: Calculation, options: TypesetOptions): Root
     numbers: numberLines(calculation),
     forPdf: options.forPdf ?? false,
     problems: [],
+    cautioned: new Set(),
     set: new Map(),
   }
   const body = sheetBody({ page, calculation } satisfies Scope, 1)
