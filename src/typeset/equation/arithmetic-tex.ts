@@ -11,7 +11,6 @@ import {
   type Printing,
 } from './print.ts'
 import { rowsOf } from './rows.ts'
-import { hasPrime } from './symbol.ts'
 
 type Binary = Extract<Formula, { type: 'binary' }>
 
@@ -141,8 +140,7 @@ export function printPower({ left, right }: Binary, printing: Printing): Print {
     !base.signed &&
     (base.look === 'bracket' ||
       base.look === 'symbol' ||
-      (base.look === 'number' && !base.tex.includes('\\,'))) &&
-    !(left.type === 'name' && hasPrime(left.path.at(-1) ?? ''))
+      (base.look === 'number' && !base.tex.includes('\\,')))
   const body = takesPower ? base : bracketed(base)
   return {
     tex: `${body.tex}^{${exponent.tex}}`,

@@ -1,10 +1,11 @@
 import type { Formula } from '../../calculate/types.ts'
+import { isUnit } from '../../quantity/units.ts'
 import { meantBy } from './operand.ts'
-import { atom, bracketed, LEVEL, type Print, type Printing } from './print.ts'
+import { atom, bracketed, LEVEL, type Look, type Print, type Printing } from './print.ts'
 import { isPutIn, showPutIn } from './put-in.ts'
 import { shownTex, showLiteral } from './quantity-tex.ts'
 import type { Shown } from '../../quantity/show.ts'
-import { isSingleGlyph, ownedTex, pathTex } from './symbol.ts'
+import { hasPrime, isSingleGlyph, ownedTex, pathTex } from './symbol.ts'
 import { valueTex } from './value-tex.ts'
 
 /** A number or quantity that stands in the formula, as its author typed it. */
@@ -44,18 +45,23 @@ function printSymbol(
 ): Print {
   if (formula.type === 'name') {
     const last = formula.path.at(-1) ?? ''
-    return atom(pathTex(formula.path), isSingleGlyph(last) ? 'symbol' : 'word')
+    return atom(pathTex(formula.path), lookOf(last))
   }
   const owner = verbatim(formula.type === 'field' ? formula.of : formula)
   if (formula.type === 'field') {
-    if (owner !== undefined)
-      return atom(ownedTex(formula.key, owner), isSingleGlyph(formula.key) ? 'symbol' : 'word')
+    if (owner !== undefined) return atom(ownedTex(formula.key, owner), lookOf(formula.key))
     const of = closed(printing.print(formula.of, printing))
     return atom(`${of.tex}{.}${ownedTex(formula.key, '')}`, 'other', of.tall ? { tall: true } : {})
   }
   const of = closed(printing.print(formula.of, { ...printing, mode: 'symbols' }))
   const indices = formula.indices.map((index) => printing.print(index, { ...printing, inline: true }).tex)
   return atom(`${of.tex}[${indices.join(',\\,')}]`, 'other', of.tall ? { tall: true } : {})
+}
+
+/** A symbol takes a power as it is; a word or a primed letter does not. A name spelt like a unit keeps a dot beside numbers. */
+function lookOf(name: string): Look {
+  if (isSingleGlyph(name) && !hasPrime(name)) return 'symbol'
+  return isUnit(name) ? 'other' : 'word'
 }
 
 function closed(print: Print): Print {
