@@ -40,7 +40,7 @@ import { declaredKindProblem, fitsKind } from './input-kind.ts'
 
 /** A sheet named by a `method` block, read and parsed. */
 export interface LoadedSheet {
-  /** The canonical name: the id with its edition, or the path from the project folder. */
+  /** The canonical name: the id with its edition, or the path as written, from the using sheet. */
   readonly id: string
   readonly builtIn: boolean
   readonly sheet: Sheet
@@ -63,7 +63,7 @@ const BUDGET = 5_000_000
 
 /** Calculates every statement of a sheet in document order. Never throws for any sheet: what is wrong becomes a finding. */
 export function calculate(sheet: Sheet, context: CalculateContext): Calculation {
-  return new SheetCalculator(sheet, context, { left: BUDGET }, [], undefined).run()
+  return new SheetCalculator(sheet, context, { left: BUDGET }, [sheet.path], undefined).run()
 }
 
 interface Known {

@@ -39,8 +39,9 @@ export function useSheet(user: SheetCalculator, block: MethodBlock): CalculatedB
       user.addFindings([finding({ ...loaded.problem, file: user.sheet.path, span: block.idSpan })])
       return fail(loaded.problem.message)
     }
-    const chain = [...user.chain, loaded.id]
-    if (user.chain.includes(loaded.id) || loaded.sheet.path === user.sheet.path) {
+    const place = loaded.builtIn ? loaded.id : loaded.sheet.path
+    const chain = [...user.chain, place]
+    if (user.chain.includes(place)) {
       throw new FormulaError(
         'circular-method',
         `the sheets use each other in a circle: ${chain.join(' → ')}`,

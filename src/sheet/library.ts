@@ -1,5 +1,5 @@
 import { existsSync, readdirSync, realpathSync } from 'node:fs'
-import { dirname, isAbsolute, join, relative, resolve, sep } from 'node:path'
+import { dirname, isAbsolute, join, posix, relative, resolve, sep } from 'node:path'
 import type { FindingInput } from '../finding.ts'
 import { packageRoot } from '../package-root.ts'
 import { nearestName } from '../quantity/nearest-name.ts'
@@ -56,7 +56,7 @@ export class SheetLibrary {
     const shown = shownPath(path, from, cwd)
     const found = this.read(path, shown)
     if ('rule' in found) return { ...found, message: `\`${id}\`: ${found.message}` }
-    return { id: relative(root, path).split(sep).join('/'), builtIn: false, parsed: found }
+    return { id: posix.normalize(id), builtIn: false, parsed: found }
   }
 
   private builtIn(id: string): FoundSheet | LibraryProblem {
