@@ -2,6 +2,7 @@ import type { Element } from 'hast'
 import { h } from 'hastscript'
 import type { Failure } from '../calculate/types.ts'
 import { lineNumber, ofStatement, tick } from './evidence.ts'
+import { messageText } from './message-text.ts'
 import type { Scope } from './scope.ts'
 
 /** A statement that could not be calculated, as written, with the reason. */
@@ -20,6 +21,6 @@ export function failureWords({ statement, because }: Failure): Element[] {
   return [
     ...(statement.meaning === undefined ? [] : [h('p', { className: 'meaning' }, statement.meaning)]),
     h('p', [h('code', statement.text)]),
-    h('p', { className: 'because' }, [h('strong', 'NOT CALCULATED'), `: ${because}`]),
+    h('p', { className: 'because' }, [h('strong', 'NOT CALCULATED'), ' ', ...messageText(because)]),
   ]
 }

@@ -2,9 +2,10 @@ import type { Element } from 'hast'
 import { h } from 'hastscript'
 import type { VFileMessage } from 'vfile-message'
 import { severityOf } from '../finding.ts'
+import { messageText } from './message-text.ts'
 
 /** Everything the program found to say of the sheet, with the place in its text. */
-export function findingsList(findings: readonly VFileMessage[]): Element[] {
+export function findingsList(findings: readonly VFileMessage[], path: string): Element[] {
   if (findings.length === 0) return [h('h2', 'Findings'), h('p', 'None.')]
   return [
     h('h2', 'Findings'),
@@ -16,20 +17,23 @@ export function findingsList(findings: readonly VFileMessage[]): Element[] {
           ['Kind', 'Place', 'Finding'].map((name) => h('th', { scope: 'col' }, name)),
         ),
       ]),
-      h('tbody', findings.map(row)),
+      h(
+        'tbody',
+        findings.map((finding) => row(finding, path)),
+      ),
     ]),
   ]
 }
 
-function row(finding: VFileMessage): Element {
+function row(finding: VFileMessage, path: string): Element {
   const severity = severityOf(finding)
   return h('tr', { className: severity }, [
     h('th', { scope: 'row' }, severity === 'error' ? 'ERROR' : severity),
-    h('td', place(finding)),
+    h('td', place(finding, path)),
     h('td', [
-      h('p', codes(finding.reason)),
+      h('p', messageText(finding.reason)),
       h('p', { className: 'hint' }, [
-        ...codes(finding.note ?? ''),
+        ...messageText(finding.note ?? ''),
         ' ',
         h('code', { className: 'rule' }, finding.ruleId ?? ''),
       ]),
@@ -37,11 +41,8 @@ function row(finding: VFileMessage): Element {
   ])
 }
 
-function place({ file, line, column }: VFileMessage): string {
-  return [file, line, column].filter((part) => part !== undefined).join(':')
-}
-
-/** What stands between back quotes in a message is code. */
-function codes(text: string): (Element | string)[] {
-  return text.split('`').map((part, i) => (i % 2 === 1 ? h('code', part) : part))
+function place({ file, line, column }: VFileMessage, path: string): string {
+  const within =
+    line === undefined ? '' : `line ${String(line)}${column === undefined ? '' : `:${String(column)}`}`
+  return file === path || file === undefined ? within : [file, within].filter(Boolean).join(', ')
 }

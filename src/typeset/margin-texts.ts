@@ -6,6 +6,8 @@ import { alarmWords, type Outcome } from './verdict-words.ts'
 
 /** Digits of the digest that the foot of a page carries: enough to tell two prints apart. */
 const SHORT = 12
+/** Characters of the project's name and of the title in the head of a page. */
+const HEAD = 80
 
 /** What stands in the margins of every printed page; `templates/print.css` says where. */
 export function marginTexts(
@@ -15,12 +17,23 @@ export function marginTexts(
 ): MarginTexts {
   const revision = meta.revision === undefined ? '' : `\u00a0\u00a0\u00a0revision ${meta.revision}`
   return {
-    'head-left': [meta.project, meta.title].filter(Boolean).join('\n'),
+    'head-left': [meta.project, meta.title].flatMap((text) => (text ? shortened(text) : [])).join('\n'),
     'head-alarm': alarmWords(outcome),
     'head-right': `${meta.sheet}${revision}\n${STATUS}\n`,
     'foot-left': `${peopleLine(meta)}\n${REVIEW_SHORT}`,
     'foot-right': `Stanchion ${programVersion}\n${digest === undefined ? '' : shortDigest(digest)}`,
   }
+}
+
+/** As much as there is room for in the head of a page; the first sheet has the whole. */
+function shortened(text: string): string {
+  const characters = [...text]
+  return characters.length <= HEAD
+    ? text
+    : `${characters
+        .slice(0, HEAD - 1)
+        .join('')
+        .trimEnd()}…`
 }
 
 function shortDigest(digest: string): string {

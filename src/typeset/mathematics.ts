@@ -2,6 +2,7 @@ import type { ElementContent } from 'hast'
 import type { CheckLine, NamedLine, Value } from '../calculate/types.ts'
 import { checkEquation } from './equation/check-equation.ts'
 import { equation } from './equation/equation.ts'
+import { LANE } from './equation/layout.ts'
 import { renderMath, renderProseMath, type ProseMath } from './equation/render.ts'
 import { pathTex, pathWords } from './equation/symbol.ts'
 import { valueTex } from './equation/value-tex.ts'
@@ -14,9 +15,20 @@ export function symbolMath(name: string, page: Page): ElementContent[] {
 }
 
 /** A calculated line as symbols = numbers put in = result, broken where it would run out of its lane. */
-export function lineMath(line: NamedLine, page: Page, width?: number): ElementContent[] {
-  const { tex, words } = equation(line, page.profile, width === undefined ? {} : { width })
-  return renderMath(tex, { display: true, words, forPdf: page.forPdf })
+export function lineMath(line: NamedLine, page: Page, width = LANE - BOLDER): ElementContent[] {
+  const { tex, words, result } = equation(line, page.profile, { width })
+  const shown = line.value.type === 'quantity' ? withBold(tex, result) : tex
+  return renderMath(shown, { display: true, words, forPdf: page.forPdf })
+}
+
+/** What bold figures of a result take more than others, in em of the mathematics. */
+const BOLDER = 0.7
+
+/** The result stands out from the numbers that it was made of; its unit does not. */
+function withBold(tex: string, result: string | undefined): string {
+  const at = result === undefined ? -1 : tex.lastIndexOf(`=${result}`)
+  if (result === undefined || at < 0) return tex
+  return `${tex.slice(0, at)}=\\mathbf{${result}}${tex.slice(at + 1 + result.length)}`
 }
 
 /** Both sides of a check, in symbols and in numbers. */

@@ -5,6 +5,7 @@ import type { PageChecks } from './checks-of-page.ts'
 import { usedBy } from './checks-of-page.ts'
 import { lineLink } from './cross-references.ts'
 import { allEntries, isFailure, type Entry } from './entries.ts'
+import { messageText } from './message-text.ts'
 import type { Page } from './scope.ts'
 
 type Point = readonly (ElementContent | string)[]
@@ -23,7 +24,12 @@ export function openPoints(calculation: Calculation, checks: PageChecks, page: P
   })
   const failures = entries
     .filter(isFailure)
-    .map((entry): Point => [...at(entry), h('code', entry.statement.text), `: ${entry.because}`])
+    .map((entry): Point => [
+      ...at(entry),
+      h('code', entry.statement.text),
+      ': ',
+      ...messageText(entry.because),
+    ])
   const limits = checks.limits
     .filter(({ check }) => check.verdict === 'fail')
     .map(({ method, check }): Point => [...at(check), `${check.title} (${method})`])

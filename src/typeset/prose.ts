@@ -133,6 +133,7 @@ const processor = unified()
   .use(remarkRehype, {
     allowDangerousHtml: true,
     clobberPrefix: '',
+    footnoteBackContent: '↑',
     handlers: {
       code: block(defaultHandlers.code as Handler),
       heading,

@@ -17,7 +17,7 @@ export function solverNote(report: SolverReport, page: Page): Element {
   return h('div', { className: 'solver' }, [
     h('p', [
       h('code', report.question),
-      ' ',
+      ': ',
       ...value(report.value),
       ` by ${report.route}${endedWords(report)}`,
     ]),

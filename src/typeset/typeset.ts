@@ -73,7 +73,7 @@ export function typeset(calculation: Calculation, options: TypesetOptions): Root
     body,
     notation: notation(calculation, page),
     references: references(calculation, page),
-    findings: findingsList(findings),
+    findings: findingsList(findings, calculation.sheet.path),
     record: computationRecord(calculation, options, page),
     cautions: [cautions()],
   })

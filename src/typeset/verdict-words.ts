@@ -23,7 +23,7 @@ export function verdictWords(outcome: Outcome, page: Page): Element {
   return h('div', { className: ['verdict', outcome.verdict] }, [
     h('h2', 'Result'),
     h('p', { className: 'verdict-sentence' }, headline(outcome)),
-    ...(governing ? [governingSentence(governing, page)] : []),
+    ...(governing && outcome.verdict !== 'error' ? [governingSentence(governing, page)] : []),
   ])
 }
 
