@@ -68,7 +68,7 @@ function signBetween(left: Look, right: Look): string {
   if (right === 'number' || right === 'quantity')
     return left === 'number' || left === 'quantity' ? '\\times ' : '\\cdot '
   const clear: Readonly<Partial<Record<Look, readonly Look[]>>> = {
-    number: ['symbol', 'word', 'bracket', 'call', 'root'],
+    number: ['symbol', 'bracket', 'call', 'root'],
     symbol: ['symbol', 'call', 'root'],
     bracket: ['symbol', 'bracket', 'call', 'root'],
     fraction: ['symbol', 'bracket', 'call', 'root'],

@@ -6,6 +6,7 @@ import { layChain, type Link } from './layout.ts'
 import { printRelation } from './logic-tex.ts'
 import { meantBy } from './operand.ts'
 import { atom, bracketed, LEVEL, withoutGroup, type Print, type Printing } from './print.ts'
+import { asTyped } from './quantity-tex.ts'
 import { symbolTex } from './symbol.ts'
 import { textTex } from './text-tex.ts'
 import { valueTex } from './value-tex.ts'
@@ -76,6 +77,7 @@ function partsOf(line: NamedLine, profile: Profile): EquationParts {
   const numbers = { ...printing, mode: 'numbers' as const }
   const substituted = closed(printing.print(line.formula, numbers))
   const saysSame = substituted.tex === symbolic.tex
+  const isSpelledOut = !line.unit && isSpelled(line.formula, line)
   const isAlias = !line.unit && meantBy(withoutGroup(line.formula), line.operands) !== undefined
   const before = saysSame ? symbolic : substituted
   // What a model is made from says all, unless numbers were put in: then its description tells how they were understood.
@@ -84,7 +86,7 @@ function partsOf(line: NamedLine, profile: Profile): EquationParts {
   return {
     symbolic,
     ...(saysSame ? {} : { substituted }),
-    ...(before.tex === result.tex || (isAlias && !saysSame) || isTold ? {} : { result }),
+    ...(before.tex === result.tex || (isAlias && !saysSame) || isTold || isSpelledOut ? {} : { result }),
     ...(because ? { because } : {}),
   }
 }
@@ -100,6 +102,19 @@ export function printingOfLine(line: NamedLine, profile: Profile): Printing {
 /** A comparison as the right side of `=` needs brackets; a case distinction has its brace. */
 export function closed(print: Print): Print {
   return print.level > LEVEL.case && print.level < LEVEL.sum ? bracketed(print) : print
+}
+
+/** A list or record whose entries are numbers, texts or names: with the numbers put in it is its own result. */
+function isSpelled(formula: Formula, line: NamedLine): boolean {
+  const body = withoutGroup(formula)
+  const isEntry = (entry: Formula): boolean =>
+    asTyped(entry) !== undefined ||
+    entry.type === 'text' ||
+    entry.type === 'truth' ||
+    meantBy(withoutGroup(entry), line.operands) !== undefined ||
+    isSpelled(entry, line)
+  if (body.type === 'list') return body.items.every(isEntry)
+  return body.type === 'record' && body.fields.every(({ value }) => isEntry(value))
 }
 
 /** `section("HE 160 B")`: its designation says all. */

@@ -215,6 +215,15 @@ const CALLS: ReadonlyMap<string, string> = new Map([
   ['max', 'greatest'],
   ['floor', 'whole number not above'],
   ['ceil', 'whole number not below'],
+  ['inv', 'inverse'],
+  ['det', 'determinant'],
+  ['norm', 'length'],
+  ['nthRoot', 'n-th root'],
+  ['mod', 'remainder'],
+  ['round', 'rounding'],
+  ['sinh', 'hyperbolic sine'],
+  ['cosh', 'hyperbolic cosine'],
+  ['tanh', 'hyperbolic tangent'],
 ])
 
 function spokenCall(call: Extract<Formula, { type: 'call' }>, saying: Speaking): Spoken {

@@ -39,8 +39,11 @@ export function printRelation(
 export function printConnective(formula: Extract<Formula, { type: 'binary' }>, printing: Printing): Print {
   const { operator } = formula
   const level = operator === 'and' ? LEVEL.and : LEVEL.or
-  const left = operand(printing.print(formula.left, printing), level, true)
-  const right = operand(printing.print(formula.right, printing), level + 1, true)
+  const [left, right] = [formula.left, formula.right].map((side, i) => {
+    const print = printing.print(side, printing)
+    // Which of two words in a row binds tighter is not for the reader to know.
+    return print.level === level && i === 0 ? print : operand(print, LEVEL.relation, true)
+  }) as [Print, Print]
   const word = led(right, `\\text{ ${operator} }`)
   return row([left, word], level)
 }

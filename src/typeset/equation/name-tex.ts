@@ -1,5 +1,4 @@
 import type { Formula } from '../../calculate/types.ts'
-import { isUnit } from '../../quantity/units.ts'
 import { meantBy } from './operand.ts'
 import { atom, bracketed, LEVEL, type Look, type Print, type Printing } from './print.ts'
 import { isPutIn, showPutIn } from './put-in.ts'
@@ -58,10 +57,9 @@ function printSymbol(
   return atom(`${of.tex}[${indices.join(',\\,')}]`, 'other', of.tall ? { tall: true } : {})
 }
 
-/** A symbol takes a power as it is; a word or a primed letter does not. A name spelt like a unit keeps a dot beside numbers. */
+/** A symbol takes a power as it is; a word or a primed letter does not. */
 function lookOf(name: string): Look {
-  if (isSingleGlyph(name) && !hasPrime(name)) return 'symbol'
-  return isUnit(name) ? 'other' : 'word'
+  return isSingleGlyph(name) && !hasPrime(name) ? 'symbol' : 'word'
 }
 
 function closed(print: Print): Print {
