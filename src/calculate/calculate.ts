@@ -408,13 +408,17 @@ export class SheetCalculator {
         span,
       )
     const near = nearestName(name, [...this.known.keys(), ...this.used.keys()])
-    const hint = isUnit(name)
-      ? `a unit is only read directly after a number: \`1 ${name}\``
-      : near
-        ? `did you mean \`${near}\`?`
-        : findFunction(name)
-          ? `\`${name}\` is a function: \`${findFunction(name)?.signature}\``
-          : 'define it above, in a `given` or `working` block'
+    const power = /^([A-Za-z]+)([2-9])$/.exec(name)
+    const hint =
+      power && isUnit(power[1] as string)
+        ? `did you mean the unit \`${power[1]}^${power[2]}\`?`
+        : isUnit(name)
+          ? `a unit is only read directly after a number: \`1 ${name}\``
+          : near
+            ? `did you mean \`${near}\`?`
+            : findFunction(name)
+              ? `\`${name}\` is a function: \`${findFunction(name)?.signature}\``
+              : 'define it above, in a `given` or `working` block'
     return new FormulaError('undefined-name', `\`${name}\` is not defined`, hint, span)
   }
 

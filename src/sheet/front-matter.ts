@@ -1,5 +1,6 @@
 import { isMap, isScalar, isSeq, LineCounter, parseDocument, type Node } from 'yaml'
 import { z } from 'zod'
+import { nearestName } from '../quantity/nearest-name.ts'
 import type { Problem } from './statement.ts'
 import type { Places } from './places.ts'
 import type { FrontMatter, Span } from './types.ts'
@@ -8,10 +9,14 @@ const text = z.string().trim().min(1, 'is empty')
 /** A calendar date as ISO 8601 writes it, so that it sorts and is read alike everywhere. */
 const date = z.iso.date('is not a date such as 2026-03-02')
 
-const person = z.strictObject({
-  name: text.optional().describe('Name as it is to be printed'),
-  date: date.optional().describe('ISO 8601 date'),
-})
+/** A name alone, or a name and a date. */
+const person = z.union([
+  text.transform((name) => ({ name })),
+  z.strictObject({
+    name: text.optional().describe('Name as it is to be printed'),
+    date: date.optional().describe('ISO 8601 date'),
+  }),
+])
 
 const quantityText = z
   .union([z.string().trim().min(1), z.number()])
@@ -134,7 +139,7 @@ export function readFrontMatter(yamlText: string, start: number, places: Places)
       return issue.keys.map((key) =>
         problem(
           `\`${where === '' ? key : `${where}.${key}`}\` is not a key of the front matter`,
-          `the keys are ${Object.keys(frontMatterSchema.shape).join(', ')}`,
+          hintForKey(where, key),
           keyPlace(node ?? contents, key, at) ?? span,
         ),
       )
@@ -159,10 +164,27 @@ export function readFrontMatter(yamlText: string, start: number, places: Places)
   return { problems, places: keys }
 }
 
+const KIND_OF: Readonly<Record<string, string>> = {
+  string: 'is not a text',
+  object: 'is not a group of entries `{key: value}`',
+  array: 'is not a list `[a, b]`',
+  record: 'is not a group of entries `{key: value}`',
+  number: 'is not a number',
+}
+
+const PERSON = '{name: A. Example, date: 2026-03-02}'
+
+function hintForKey(where: string, key: string): string {
+  if (where !== '')
+    return where.includes('published') ? 'see `stanchion schema front-matter`' : `write it as \`${PERSON}\``
+  const keys = Object.keys(frontMatterSchema.shape)
+  const near = nearestName(key, keys)
+  return near ? `did you mean \`${near}\`?` : `the keys are ${keys.join(', ')}`
+}
+
 function describeIssue(issue: z.core.$ZodIssue): string {
   if (issue.code === 'invalid_value') return `is not one of ${issue.values.map(String).join(', ')}`
-  if (issue.code === 'invalid_type')
-    return `is not ${issue.expected === 'string' ? 'a text' : `a ${issue.expected}`}`
+  if (issue.code === 'invalid_type') return KIND_OF[issue.expected] ?? `is not of the kind ${issue.expected}`
   if (issue.code === 'invalid_union') return 'does not have one of the forms it may have'
   return issue.message
 }
