@@ -14,21 +14,13 @@ export function symbolMath(name: string, page: Page): ElementContent[] {
   return inText(pathTex(path), pathWords(path), page)
 }
 
-/** A calculated line as symbols = numbers put in = result, broken where it would run out of its lane. */
-export function lineMath(line: NamedLine, page: Page, width = LANE - BOLDER): ElementContent[] {
-  const { tex, words, result } = equation(line, page.profile, { width })
-  const shown = line.value.type === 'quantity' ? withBold(tex, result) : tex
-  return renderMath(shown, { display: true, words, forPdf: page.forPdf })
-}
-
-/** What bold figures of a result take more than others, in em of the mathematics. */
-const BOLDER = 0.7
-
-/** The result stands out from the numbers that it was made of; its unit does not. */
-function withBold(tex: string, result: string | undefined): string {
-  const at = result === undefined ? -1 : tex.lastIndexOf(`=${result}`)
-  if (result === undefined || at < 0) return tex
-  return `${tex.slice(0, at)}=\\mathbf{${result}}${tex.slice(at + 1 + result.length)}`
+/**
+ * A calculated line as symbols = numbers put in = result, broken where it would run out of its lane. The result stands out
+ * from the numbers that it was made of; its unit does not.
+ */
+export function lineMath(line: NamedLine, page: Page, width = LANE): ElementContent[] {
+  const { tex, words } = equation(line, page.profile, { width, boldResult: true })
+  return renderMath(tex, { display: true, words, forPdf: page.forPdf })
 }
 
 /** Both sides of a check, in symbols and in numbers. */

@@ -15,6 +15,8 @@ import { equationWords } from './words.ts'
 export interface EquationOptions {
   /** Width of the lane in em of the mathematics; see layout.ts. */
   readonly width?: number
+  /** Sets the figures of a calculated quantity bold, so that it stands out from the numbers it was made of. */
+  readonly boldResult?: boolean
 }
 
 /** A calculated line ready for print. */
@@ -36,7 +38,7 @@ export interface Equation {
 export function equation(line: NamedLine, profile: Profile, options: EquationOptions = {}): Equation {
   const left = leftOf(line)
   const parts = partsOf(line, profile)
-  const links = linksOf(parts)
+  const links = linksOf(parts, options.boldResult === true && line.value.type === 'quantity')
   const { symbolic, substituted, result } = parts
   return {
     tex: layChain(left, links, options.width),
@@ -148,12 +150,23 @@ function becauseOf({ formula, branches }: NamedLine, numbers: Printing): Print |
   return reasons.length === 0 ? undefined : atom(`\\quad\\text{as }${reasons.join(',\\;')}`, 'other')
 }
 
-function linksOf({ symbolic, substituted, result, because }: EquationParts): readonly Link[] {
+function linksOf(
+  { symbolic, substituted, result, because }: EquationParts,
+  isBold: boolean,
+): readonly Link[] {
   const links: Link[] = []
-  const add = (print: Print, startsRow: boolean) => links.push({ sign: '=', print, startsRow })
+  const add = (print: Print, startsRow: boolean) => {
+    const isLast = print === result || (print === substituted && !result)
+    links.push({ sign: '=', print: isBold && isLast ? bold(print) : print, startsRow })
+  }
   if (symbolic) add(symbolic, true)
   if (substituted) add(substituted, true)
   if (result) add(result, symbolic !== undefined && substituted === undefined && symbolic.ownRow === true)
   if (because) links.push({ sign: '', print: because, startsRow: false })
   return links
+}
+
+/** Figures in bold; a unit, upright of its own, stays as it is. */
+function bold(print: Print): Print {
+  return atom(`\\mathbf{${print.tex}}`, print.look)
 }

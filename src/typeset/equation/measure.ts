@@ -13,6 +13,8 @@ type Face = 'italic' | 'upright'
 
 /** Each script is this much smaller than what it stands at. */
 const SCRIPT = 0.7
+/** Bold figures are this much wider. */
+const BOLD = 1.15
 const SPACES: ReadonlyMap<string, number> = new Map([
   [',', 0.17],
   [';', 0.28],
@@ -144,6 +146,8 @@ class Meter {
         return Math.max(this.group(scale, face), this.group(scale, face)) + 0.24
       case 'sqrt':
         return this.index(scale) + 0.95 * scale + this.group(scale, face)
+      case 'mathbf':
+        return BOLD * this.group(scale, 'upright')
       case 'mathrm':
       case 'text':
       case 'textit':
