@@ -59,10 +59,10 @@ export function charactersSeen(tree: Nodes): Seen {
       const classes = node.properties.className
       if (Array.isArray(classes)) {
         if (classes.includes('katex')) inside = true
-        if (inside) facesOf(classes as string[], math)
+        if (inside) facesOf(classes, math)
       }
     }
-    for (const child of node.children) walk(child as Nodes, inside)
+    for (const child of node.children) walk(child, inside)
   }
   walk(tree, false)
   return { text, math }

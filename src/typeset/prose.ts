@@ -45,7 +45,7 @@ export function proseToHast(tree: Root, options: ProseOptions = {}): HastRoot {
     return content && { type: 'place', n: filled.push(content) - 1 }
   }
   file.data['keep'] = keep
-  const result = processor.runSync(tree as never, file) as HastRoot
+  const result = processor.runSync(tree, file)
   if (options.document) inDocument(result, options.document)
   putInPlace(result, filled)
   return result
@@ -60,7 +60,7 @@ const keepOf = (state: State): Keep => (state.options.file as VFile).data['keep'
 const block =
   (otherwise: Handler): Handler =>
   (state: State, node: Nodes, parent) =>
-    (keepOf(state)(node as OwnNode) as never) ?? (otherwise(state, node, parent) as Element)
+    (keepOf(state)(node as OwnNode) as never) ?? otherwise(state, node, parent)
 
 const heading: Handler = (state: State, node: Heading) => {
   const before = keepOf(state)(node)
@@ -77,7 +77,7 @@ const source: Handler = (state: State, node: Math | InlineMath | SheetValueNode)
     properties: {},
     children: [{ type: 'text', value: node.type === 'sheetValue' ? `:value[${node.value}]` : node.value }],
   }
-  state.patch(node as never, element)
+  state.patch(node, element)
   return element
 }
 
@@ -87,7 +87,7 @@ const source: Handler = (state: State, node: Math | InlineMath | SheetValueNode)
  */
 const html: Handler = (state: State, node: Html, parent: Parents | undefined) => {
   const tags = [...node.value.matchAll(/<\/?([A-Za-z][^\s/>]*)/g)].map(([, name = '']) => name.toLowerCase())
-  if (tags.every((name) => ALLOWED.has(name))) return defaultHandlers.html(state, node as never)
+  if (tags.every((name) => ALLOWED.has(name))) return defaultHandlers.html(state, node)
   const text: Text = { type: 'text', value: node.value }
   state.patch(node, text)
   if (parent?.type !== 'root' && parent?.type !== 'blockquote' && parent?.type !== 'listItem') return text
@@ -120,7 +120,8 @@ function placesAsElements() {
 
 const ALLOWED = new Set(defaultSchema.tagNames)
 
-const SCHEMA: Schema = {
+/** What an author’s HTML may hold; the rest is left out. */
+export const SCHEMA: Schema = {
   ...defaultSchema,
   clobberPrefix: '',
   strip: ['script', 'style'],

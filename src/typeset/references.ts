@@ -1,6 +1,6 @@
 import type { Element } from 'hast'
 import { h } from 'hastscript'
-import type { Heading, Nodes, Root } from 'mdast'
+import type { Nodes, Root } from 'mdast'
 import { visit } from 'unist-util-visit'
 import type { Calculation, UsedSheet } from '../calculate/types.ts'
 import { usedBy } from './checks-of-page.ts'
@@ -21,9 +21,16 @@ type Citations = ReadonlyMap<string, Cited>
 /** Every source that a line or the prose cites, with where; those of a method sheet apart, since they leave its standard unsaid. */
 export function references(calculation: Calculation, page: Page): Element[] {
   const own = citations(calculation, page.numbers)
-  const methods = usedBy(calculation)
-    .filter(({ builtIn }) => builtIn)
-    .map((used) => ({ used, cited: entryCitations(linesOf(used, page), page.numbers) }))
+  const builtIn = usedBy(calculation).filter((used) => used.builtIn)
+  const methods = [...new Set(builtIn.map(({ id }) => id))]
+    .map((id) => builtIn.filter((used) => used.id === id))
+    .map((uses) => ({
+      uses,
+      cited: entryCitations(
+        uses.flatMap((used) => linesOf(used, page)),
+        page.numbers,
+      ),
+    }))
     .filter(({ cited }) => cited.size > 0)
   if (own.size === 0 && methods.length === 0) return []
   return [
@@ -32,7 +39,7 @@ export function references(calculation: Calculation, page: Page): Element[] {
       h('caption', { className: 'hidden' }, 'References'),
       h('thead', [h('tr', [h('th', { scope: 'col' }, 'Source'), h('th', { scope: 'col' }, 'Cited in')])]),
       ...(own.size > 0 ? [h('tbody', rows(own))] : []),
-      ...methods.map(({ used, cited }) => h('tbody', [groupHead(used), ...rows(cited)])),
+      ...methods.map(({ uses, cited }) => h('tbody', [...groupHead(uses), ...rows(cited)])),
     ]),
   ]
 }
@@ -42,11 +49,12 @@ function rows(cited: Citations): Element[] {
   return sorted.map(([source, where]) => h('tr', [h('th', { scope: 'row' }, source), h('td', places(where))]))
 }
 
-function groupHead({ as, calculation }: UsedSheet): Element {
-  const { source, sheet } = calculation.sheet.meta
-  return h('tr', { className: 'group' }, [
-    h('th', { colSpan: 2, scope: 'rowgroup' }, [`In ${source ?? sheet}, used as `, h('code', as)]),
-  ])
+function groupHead(uses: readonly UsedSheet[]): Element[] {
+  return uses.slice(0, 1).map(({ id, calculation }) => {
+    const { source } = calculation.sheet.meta
+    const title = [`In the method sheet `, h('code', id), ...(source === undefined ? [] : [`: ${source}`])]
+    return h('tr', { className: 'group' }, [h('th', { colSpan: 2, scope: 'rowgroup' }, title)])
+  })
 }
 
 function places({ lines, sections }: Cited) {
@@ -113,7 +121,7 @@ function proseSources(tree: Root, numbers: LineNumbers): readonly { text: string
   const found: { text: string; section: number }[] = []
   let section = 0
   visit(tree as Nodes, (node) => {
-    if (node.type === 'heading') section = numbers.begun.get(node as Heading)?.number ?? section
+    if (node.type === 'heading') section = numbers.begun.get(node)?.number ?? section
     if (node.type !== 'text') return
     for (const [, text = ''] of node.value.matchAll(IN_PROSE)) {
       if (/\p{Lu}/u.test(text) && /\d/.test(text)) found.push({ text, section })
