@@ -1,7 +1,6 @@
-import type { ElementContent, Nodes, Root as HastRoot } from 'hast'
+import type { Element, ElementContent } from 'hast'
 import { h } from 'hastscript'
 import type { Heading } from 'mdast'
-import { visit } from 'unist-util-visit'
 import type { CalculatedBlock, CalculatedInline } from '../calculate/types.ts'
 import { blockContent } from './block-content.ts'
 import { pictureProblem, proseMathProblem } from './prose-problems.ts'
@@ -38,9 +37,8 @@ export function sheetBody(scope: Scope, ranks: number, prefix = ''): ElementCont
         return writtenMath(node, scope)
     }
   }
-  const tree = proseToHast(calculation.sheet.tree, { fill, document: { ranks, prefix } })
-  embeddedImagesOnly(tree, scope)
-  return tree.children as ElementContent[]
+  const document = { ranks, prefix, insteadOf: (picture: Element) => insteadOf(picture, scope) }
+  return proseToHast(calculation.sheet.tree, { fill, document }).children as ElementContent[]
 }
 
 function sectionNumber(node: Heading, { page, outer }: Scope): ElementContent[] | undefined {
@@ -83,14 +81,10 @@ function writtenMath(
 }
 
 /** The page loads nothing: only pictures that are in the text itself are on it. */
-function embeddedImagesOnly(tree: HastRoot, scope: Scope): void {
-  visit(tree as Nodes, 'element', (element, index, parent) => {
-    if (element.tagName !== 'img' || !parent || index === undefined) return
-    const src = typeof element.properties.src === 'string' ? element.properties.src : ''
-    if (/^data:image\/(png|jpeg|gif|webp|svg\+xml)[;,]/.test(src)) return
-    scope.page.problems.push(pictureProblem(element, src, scope.calculation.sheet))
-    parent.children[index] = h('span', { className: 'not-calculated' }, [
-      `picture ${src === '' ? 'without address' : src} is not on the page`,
-    ])
-  })
+function insteadOf(picture: Element, scope: Scope): Element | undefined {
+  const src = typeof picture.properties.src === 'string' ? picture.properties.src : ''
+  if (/^data:image\/(png|jpeg|gif|webp|svg\+xml)[;,]/.test(src)) return undefined
+  scope.page.problems.push(pictureProblem(picture, src, scope.calculation.sheet))
+  const words = `picture ${src === '' ? 'without address' : src} is not on the page`
+  return h('span', { className: 'not-calculated' }, words)
 }

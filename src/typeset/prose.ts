@@ -21,8 +21,17 @@ export type Fill = (node: OwnNode) => ElementContent[] | undefined
 
 export interface ProseOptions {
   readonly fill?: Fill
-  /** In a document: headings get ids, and stand this many ranks lower; ids and links to them begin with `prefix`. */
-  readonly document?: { readonly ranks: number; readonly prefix: string }
+  readonly document?: InDocument
+}
+
+/** Prose as a part of a document. */
+export interface InDocument {
+  /** Headings get ids, and stand this many ranks lower. */
+  readonly ranks: number
+  /** Ids, and links to them, begin so. */
+  readonly prefix: string
+  /** What stands for a picture that the page cannot show; nothing for one that it can. */
+  readonly insteadOf: (picture: Element) => Element | undefined
 }
 
 /** A place kept for what `fill` gives, through the passes that must not see it. No author's markup can make one. */
@@ -151,9 +160,11 @@ const processor = unified()
 
 const addSlugs = rehypeSlug()
 
-function inDocument(tree: HastRoot, { ranks, prefix }: NonNullable<ProseOptions['document']>): void {
+function inDocument(tree: HastRoot, { ranks, prefix, insteadOf }: InDocument): void {
   addSlugs(tree)
-  visit(tree as HastNodes, 'element', (element) => {
+  visit(tree as HastNodes, 'element', (element, index, parent) => {
+    const other = element.tagName === 'img' ? insteadOf(element) : undefined
+    if (other && parent && index !== undefined) parent.children[index] = other
     const rank = /^h([1-6])$/.exec(element.tagName)?.[1]
     if (rank !== undefined) element.tagName = `h${String(Math.min(6, Number(rank) + ranks))}`
     if (prefix === '') return
