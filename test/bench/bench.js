@@ -83,7 +83,7 @@ async function warm() {
 async function growth() {
   const [small, large] = [sheetOf(200), sheetOf(2000)]
   const sheets = { small: () => prepare(small), large: () => prepare(large) }
-  const evaluated = await measure(rounds, sheets)
+  const evaluated = await measure(rounds * 3, sheets)
   const pages = await measure(Math.ceil(rounds / 2), { small: () => page(small), large: () => page(large) })
   return [
     line('evaluating 2000 equations / 200, by ten', evaluated.large, evaluated.small, 1.3, 10),
