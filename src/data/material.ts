@@ -109,7 +109,7 @@ function band(grade: Grade, thickness: number | undefined): Found<MaterialRow> {
   if (row !== undefined) return { ok: materialRow(grade, row, thickness === undefined) }
   const inMillimetres = (thickness ?? NaN) * 1000
   const last = grade.rows.at(-1)
-  const limits = `${cell(grade.rows[0] ?? {}, 't_over_mm')} mm < t <= ${cell(last ?? {}, 't_upto_mm')} mm`
+  const limits = `${cell(grade.rows[0] ?? {}, 't_over_mm')} mm < t ≤ ${cell(last ?? {}, 't_upto_mm')} mm`
   return {
     problem: `${grade.title} (${grade.standard}) is tabulated for ${limits}; the thickness is ${inMillimetres} mm`,
     suggestions: [],
@@ -166,7 +166,7 @@ function sourceText(grade: Grade, row: TableRow, thinnest: boolean): string {
   const note = cell(row, 'note')
   const parts = [`${grade.standard}, ${grade.product}, ${grade.file}`]
   const more = grade.rows.length > 1 && thinnest ? ', the thinnest band, as no thickness is given' : ''
-  if (hasBand(row)) parts.push(`for ${cell(row, 't_over_mm')} mm < t <= ${cell(row, 't_upto_mm')} mm${more}`)
+  if (hasBand(row)) parts.push(`for ${cell(row, 't_over_mm')} mm < t ≤ ${cell(row, 't_upto_mm')} mm${more}`)
   if (range.includes('-')) parts.push(`f_u is the lower end of ${range.replace('-', ' to ')} MPa`)
   if (cell(row, 'source').includes('from memory')) parts.push('row from memory')
   else parts.push(`row from ${cell(row, 'source')}`)

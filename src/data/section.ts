@@ -90,11 +90,12 @@ function sectionRow({ title, table, row }: Entry): SectionRow {
 function sourceText(table: SectionTable, row: TableRow, fields: Fields): string {
   const note = cell(row, 'note')
   const calculated = Object.entries(fields)
-    .filter(([, field]) => field.basis !== 'tabulated')
+    .filter(([, { basis }]) => basis !== 'tabulated' && fields[basis] === undefined)
+    .filter(([, { basis }], i, all) => all.findIndex(([, other]) => other.basis === basis) === i)
     .map(([symbol]) => symbol)
   return [
     `${cell(row, 'standard')}, ${table.file}, ${provenance(row)}`,
-    `${calculated.join(', ')} calculated from the tabulated values`,
+    `${calculated.join(', ')} calculated from tabulated values`,
     ...(note === '' ? [] : [note]),
   ].join('; ')
 }

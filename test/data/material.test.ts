@@ -18,7 +18,7 @@ describe('findMaterial', () => {
     const row = material('S355')
     expect(si(row)).toEqual({ f_y: 355e6, f_u: 470e6, E: 210e9, G: 81e9, nu: 0.3, t_max: 0.016 })
     expect(row.source).toBe(
-      'EN 10025-2, hot-rolled non-alloy, materials-en.csv; for 0 mm < t <= 16 mm, the thinnest band, as no thickness is given; ' +
+      'EN 10025-2, hot-rolled non-alloy, materials-en.csv; for 0 mm < t ≤ 16 mm, the thinnest band, as no thickness is given; ' +
         'f_u is the lower end of 470 to 630 MPa; row from EN 10025-2',
     )
   })
@@ -35,7 +35,7 @@ describe('findMaterial', () => {
   })
 
   it('refuses a thickness outside the table and says what the table covers', () => {
-    const problem = 'S355 (EN 10025-2) is tabulated for 0 mm < t <= 250 mm; the thickness is 300 mm'
+    const problem = 'S355 (EN 10025-2) is tabulated for 0 mm < t ≤ 250 mm; the thickness is 300 mm'
     expect(findMaterial('S355', 0.3)).toEqual({ problem, suggestions: [] })
     for (const thickness of [0, -0.01, NaN, Infinity])
       expect(findMaterial('S355', thickness)).toHaveProperty('problem')

@@ -116,7 +116,7 @@ describe('findSection', () => {
 
   it('says where a row comes from and what of it is calculated', () => {
     expect(section('CHS 139.7x6.3').source).toBe(
-      'EN 10210-2 / EN 10219-2, sections-chs-en.csv, from memory; d, I_y, I_z, i, i_y, i_z, W_el calculated from the tabulated values',
+      'EN 10210-2 / EN 10219-2, sections-chs-en.csv, from memory; i, W_el calculated from tabulated values',
     )
     expect(section('IPE 200').source).toContain('dimensions: printed source, properties: from memory')
     expect(section('Pipe 10 STD').source).toContain('A is 3.3 % above')
