@@ -1,4 +1,4 @@
-import type { PDFDocument} from '@cantoo/pdf-lib';
+import type { PDFDocument } from '@cantoo/pdf-lib'
 import { PDFArray, PDFDict, PDFName, PDFString, type PDFObject } from '@cantoo/pdf-lib'
 
 const name = (text: string) => PDFName.of(text)

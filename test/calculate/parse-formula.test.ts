@@ -15,7 +15,8 @@ function calculate(text: string): Value {
   const scope: Scope = {
     lookup: (name, at) => {
       const si = NAMES[name]
-      if (si === undefined) throw new FormulaError('undefined-name', `\`${name}\` is not defined`, 'define it', at)
+      if (si === undefined)
+        throw new FormulaError('undefined-name', `\`${name}\` is not defined`, 'define it', at)
       return { type: 'quantity', si, dimension: [0, 0, 0, 0] }
     },
     source: ({ start, end }) => text.slice(start.offset, end.offset),

@@ -177,7 +177,9 @@ describe('the package installed in another folder', () => {
   })
 
   it('is run by npx, here and in the checkout', () => {
-    expect(npm(['exec', '--offline', '--', 'stanchion', 'methods'], folder)).toContain('en1993-1-1-2005/6.3.1')
+    expect(npm(['exec', '--offline', '--', 'stanchion', 'methods'], folder)).toContain(
+      'en1993-1-1-2005/6.3.1',
+    )
     expect(npm(['exec', '--offline', '--', 'stanchion', 'methods'], ROOT)).toContain('en1993-1-1-2005/6.3.1')
   })
 })
