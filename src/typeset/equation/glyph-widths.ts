@@ -20,8 +20,8 @@ export const UPRIGHT = widths(
 
 /** Digits, signs and marks. */
 export const MARKS = widths(
-  '0123456789.,;:()[]|/°“”‘’',
-  `${'50 '.repeat(10)}28 28 28 28 39 39 28 28 28 50 75 50 50 28 28`,
+  "0123456789.,;:()[]|/°“”‘’'-%&#_ ",
+  `${'50 '.repeat(10)}28 28 28 28 39 39 28 28 28 50 75 50 50 28 28 28 33 83 78 83 31 25`,
 )
 
 /** Greek letters by their command; the widest of each case for the rest. */

@@ -72,7 +72,7 @@ class Meter {
     let width = 0
     let hasLeft = false
     while (this.at < this.tex.length && !this.isEnd()) {
-      const operator = this.operator()
+      const operator = this.inText ? undefined : this.operator()
       if (operator !== undefined) {
         const space = scale < 1 ? 0 : operator.space === 'relation' ? 0.56 : hasLeft ? 0.44 : 0
         width += (operator.glyph + space) * scale
@@ -92,6 +92,8 @@ class Meter {
   }
 
   private inIndex = false
+  /** Where blanks have a width. */
+  private inText = false
 
   private peekCommand(): string {
     return /^\\([A-Za-z]+|.)/s.exec(this.tex.slice(this.at, this.at + 20))?.[1] ?? ''
@@ -133,26 +135,38 @@ class Meter {
     return width
   }
 
+  private text(scale: number): number {
+    this.inText = true
+    this.skip(1)
+    const width = this.list(scale, 'upright')
+    this.inText = false
+    this.skip(1)
+    return width
+  }
+
   private command(scale: number, face: Face): number {
     const name = this.peekCommand()
     this.skip(name.length + 1)
+    const mark = this.inText ? MARKS.get(name) : undefined
+    if (mark !== undefined) return mark * scale
     const space = SPACES.get(name)
     if (space !== undefined) return space * scale
     const delimiter = DELIMITER_SIZES.get(name)
     if (delimiter !== undefined) return this.delimited(name, delimiter, scale)
-    if (DELIMITERS.has(name)) return 0.5 * scale
+    if (DELIMITERS.has(name)) return (/^[lr][vV]/.test(name) ? 0.28 : 0.5) * scale
     switch (name) {
       case 'frac':
         return Math.max(this.group(scale, face), this.group(scale, face)) + 0.24
       case 'sqrt':
-        return this.index(scale) + 0.95 * scale + this.group(scale, face)
+        return this.index(scale) + 0.92 * scale + this.group(scale, face)
       case 'mathbf':
         return BOLD * this.group(scale, 'upright')
       case 'mathrm':
-      case 'text':
-      case 'textit':
       case 'operatorname':
         return this.group(scale, 'upright')
+      case 'text':
+      case 'textit':
+        return this.text(scale)
       case 'bar':
       case 'hat':
       case 'overline':
@@ -215,7 +229,7 @@ class Meter {
 
   private skip(count: number): void {
     this.at += count
-    while (this.tex[this.at] === ' ') this.at++
+    while (!this.inText && this.tex[this.at] === ' ') this.at++
   }
 }
 

@@ -69,9 +69,21 @@ export function renderProseMath(tex: string, display: boolean, forPdf = false): 
   }
 }
 
+/** KaTeX's words for what it could not read, as a finding says them. */
+const FACTS: readonly (readonly [pattern: RegExp, fact: string])[] = [
+  [/^LaTeX-incompatible input.*Unrecognized Unicode character.*$/s, 'it has a character that cannot be set'],
+  [/^Too many expansions.*$/s, 'a macro in it never ends'],
+  [/'([^']*)'/g, '`$1`'],
+  [/[Ee]xpected `EOF`/g, 'expected the end'],
+  [/`EOF`/g, 'the end'],
+]
+
 function refusal(error: InstanceType<typeof katex.ParseError>): ProseMath {
   const { rawMessage, position } = error as { rawMessage?: string; position?: number }
-  const text = (rawMessage ?? error.message).replace(/^KaTeX parse error: /, '').replaceAll("'", '`')
+  const text = FACTS.reduce(
+    (message, [pattern, fact]) => message.replace(pattern, fact),
+    rawMessage ?? error.message,
+  )
   const problem = text.charAt(0).toLowerCase() + text.slice(1)
   return { problem, ...(position === undefined ? {} : { offset: position }) }
 }

@@ -15,35 +15,31 @@ const INDENT = '\\quad '
  * @param rest width of each further row, in em
  */
 export function rowsOf(print: Print, first: number, rest: number): string[] {
-  const rows = ['']
-  let left = first
-  let begins = true
+  const rows: string[] = []
+  let row = ''
+  let indent = 0
+  let isEmpty = true
   const waiting = [print]
   for (let piece = waiting.shift(); piece; piece = waiting.shift()) {
-    const atStart: boolean = begins
-    begins = false
-    const tex = atStart ? (piece.atStart ?? piece.tex) : piece.tex
-    const width = measure(tex)
-    const inPlace = piece.split && piece.isFactor && left > ROOM * rest
-    if (width <= left) {
-      rows.push((rows.pop() ?? '') + tex)
-      left -= width
-    } else if (!atStart && !inPlace) {
-      rows.push(INDENT.repeat(piece.depth ?? 0))
-      left = rest - (piece.depth ?? 0)
-      begins = true
+    const tex = isEmpty ? (piece.atStart ?? piece.tex) : piece.tex
+    const room = (rows.length === 0 ? first : rest) - indent
+    const left = room - measure(row)
+    const { depth = 0 } = piece
+    if (measure(row + tex) <= room || (isEmpty && !piece.split && !piece.within)) {
+      row += tex
+      isEmpty = false
+    } else if (!isEmpty && !(piece.split && piece.isFactor && left > ROOM * rest)) {
+      rows.push(INDENT.repeat(indent) + row)
+      row = ''
+      indent = depth
+      isEmpty = true
       waiting.unshift(piece)
     } else if (piece.split) {
-      begins = atStart
-      const { depth = 0 } = piece
       waiting.unshift(...piece.split().map((part) => ({ ...part, depth: depth + (part.depth ?? 0) })))
     } else if (piece.within) {
-      waiting.unshift(piece.within(left))
-      begins = atStart
-    } else {
-      rows.push((rows.pop() ?? '') + tex)
-      left = 0
+      waiting.unshift({ ...piece.within(left), depth })
     }
   }
+  rows.push(INDENT.repeat(indent) + row)
   return rows
 }
