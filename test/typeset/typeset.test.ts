@@ -1,4 +1,6 @@
 import type { Element } from 'hast'
+import { fromHtml } from 'hast-util-from-html'
+import { toHtml } from 'hast-util-to-html'
 import { readdirSync } from 'node:fs'
 import { describe, expect, it } from 'vitest'
 import { checksOf } from '../../src/verify/verify.ts'
@@ -30,6 +32,13 @@ describe('a page of HTML', () => {
 
   it.each(samples)('is the same bytes each time: %s', (path) => {
     expect(pageOf({ path }).html === pageOf({ path }).html).toBe(true)
+  })
+
+  it.each(samples)('is written as any writer of HTML trees would write it: %s', (path) => {
+    const { tree, html } = pageOf({ path })
+    const read = (text: string) =>
+      JSON.stringify(fromHtml(text), (key, value: unknown) => (key === 'position' ? undefined : value))
+    expect(read(html.trimEnd()) === read(toHtml(tree))).toBe(true)
   })
 
   it('names its language and its title', () => {
