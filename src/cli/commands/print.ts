@@ -1,4 +1,6 @@
 import { basename, dirname, join, resolve } from 'node:path'
+import type { VFileMessage } from 'vfile-message'
+import type { Calculation } from '../../calculate/types.ts'
 import type { Prepared } from '../../pipeline.ts'
 import { PublishProblem } from '../../publish/publish-problem.ts'
 import type { PdfJob } from '../../publish/print-pdf.ts'
@@ -33,8 +35,11 @@ export const print: Command = {
     for await (const sheet of prepareAll(args, io)) {
       prepared.push(sheet)
       statuses.push(exitStatus(sheet))
-      if (sheet.calculation && sheet.verdict !== 'error')
-        statuses.push(await writeHtml(sheet, options, io, paper, jobs))
+      if (!sheet.calculation || sheet.verdict === 'error') continue
+      const written = await writeHtml(sheet, sheet.calculation, options, io, paper, jobs)
+      statuses.push(written.status)
+      // What could not be set as its author meant it is known only now.
+      prepared[prepared.length - 1] = { ...sheet, findings: [...sheet.findings, ...written.met] }
     }
     if (options['pdf']) statuses.push(await writePdf(jobs, options, io))
     reportFindings(prepared, io, options['debug'] === true)
@@ -78,14 +83,13 @@ function claimOutput(path: string, options: Options, io: Io, taken: Map<string, 
 }
 
 async function writeHtml(
-  sheet: Prepared,
+  { findings, verdict, path }: Prepared,
+  calculation: Calculation,
   options: Options,
   io: Io,
   paper: 'A4' | 'Letter' | undefined,
   jobs: Job[],
-): Promise<ExitStatus> {
-  const { calculation, findings, verdict, path } = sheet
-  if (!calculation) return 2
+): Promise<{ status: ExitStatus; met: readonly VFileMessage[] }> {
   const [{ typeset }, { htmlText }, { writeAtomic }] = await Promise.all([
     import('../../typeset/typeset.ts'),
     import('../../publish/html-text.ts'),
@@ -94,28 +98,28 @@ async function writeHtml(
   const digest = digestOf(calculation)
   const version = programVersion()
   const page = (forPdf: boolean) =>
-    htmlText(
-      typeset(calculation, {
-        findings,
-        verdict,
-        digest,
-        programVersion: version,
-        forPdf,
-        ...(paper ? { paper } : {}),
-      }),
-    )
+    typeset(calculation, {
+      findings,
+      verdict,
+      digest,
+      programVersion: version,
+      forPdf,
+      ...(paper ? { paper } : {}),
+    })
+  const tree = page(false)
+  const met = tree.data?.findings ?? []
   const target = outputPath(path, 'html', options, io)
   try {
-    writeAtomic(target, page(false), { createFolder: options['output'] !== undefined })
+    writeAtomic(target, htmlText(tree), { createFolder: options['output'] !== undefined })
   } catch (error) {
-    return problem(error, path, io)
+    return { status: problem(error, path, io), met }
   }
   io.out(`${target}\n`)
   if (options['pdf']) {
     const { meta } = calculation.sheet
     jobs.push({
       path,
-      html: page(true),
+      html: htmlText(page(true)),
       metadata: {
         title: `${meta.sheet} ${meta.title}`,
         language: meta.language ?? 'en',
@@ -127,7 +131,7 @@ async function writeHtml(
       },
     })
   }
-  return 0
+  return { status: 0, met }
 }
 
 async function writePdf(jobs: readonly Job[], options: Options, io: Io): Promise<ExitStatus> {
