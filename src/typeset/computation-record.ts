@@ -1,3 +1,4 @@
+import { basename } from 'node:path'
 import type { Element, ElementContent } from 'hast'
 import { h } from 'hastscript'
 import type { Calculation, SolverReport, UsedSheet } from '../calculate/types.ts'
@@ -20,7 +21,7 @@ export function computationRecord(calculation: Calculation, program: Program, pa
     h('h2', 'Computation record'),
     h('dl', { className: 'record' }, [
       entry('Program', [`Stanchion ${program.programVersion}`]),
-      entry('Sheet', [h('code', calculation.sheet.path)]),
+      entry('Sheet', [h('code', basename(calculation.sheet.path))]),
       ...(program.digest === undefined ? [] : [entry('Digest', [h('code', program.digest)])]),
       entry('Units', [unitsWords(calculation)]),
     ]),
