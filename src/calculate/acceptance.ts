@@ -5,7 +5,7 @@ import { inOrder } from './evaluate.ts'
 import { FormulaError } from './formula-error.ts'
 import type { CheckLine, Formula, Operand, Quantity, SolverReport, Value } from './types.ts'
 
-interface Side {
+export interface Side {
   readonly formula: Formula
   readonly value: Value
   readonly operands: ReadonlyMap<string, Operand>

@@ -14,7 +14,7 @@ import type {
   Span,
   Statement,
 } from '../sheet/types.ts'
-import { acceptance } from './acceptance.ts'
+import { acceptance, type Side } from './acceptance.ts'
 import { evaluate, type Scope } from './evaluate.ts'
 import { FormulaError } from './formula-error.ts'
 import { findFunction } from './functions/index.ts'
@@ -285,14 +285,10 @@ export class SheetCalculator {
   }
 
   private acceptance(statement: Acceptance, validity: boolean): CheckLine {
-    const left = this.side(statement.left)
-    const right = this.side(statement.right)
-    return acceptance(statement, left, right, validity, (span) => this.source(span))
-  }
-
-  private side(expression: Expression) {
-    const { formula, unit } = this.parse(expression)
-    return { formula, ...this.evaluateFormula(formula), ...(unit ? { unit } : {}) }
+    // Both sides are read before either is calculated, so that the names of both count as used.
+    const [left, right] = [this.parse(statement.left).formula, this.parse(statement.right).formula]
+    const side = (formula: Formula): Side => ({ formula, ...this.evaluateFormula(formula) })
+    return acceptance(statement, side(left), side(right), validity, (span) => this.source(span))
   }
 
   private calculateInline(inline: InlineValue): CalculatedInline {

@@ -21,7 +21,7 @@ export function checksTable(checks: PageChecks, page: Page): Element[] {
       checks.others.map(({ sheet, check }) => row(check, `${sheet}: ${check.title}`, checks, page)),
     ),
     group(
-      'Limits of use of methods',
+      'Limits of use',
       limitUses(checks).flatMap((use) => limitRows(use, page)),
     ),
   ].flat()

@@ -62,6 +62,10 @@ function wrongModel(model: ModelValue, context: CallContext, question: string, t
   )
 }
 
+const COLUMN_SOURCE =
+  'Wittrick and Williams, Q. J. Mech. Appl. Math. 24 (1971); Timoshenko and Gere, Theory of Elastic Stability, ch. 2'
+const MECHANISM_SOURCE = 'Thompson and Hunt, A General Theory of Elastic Stability (1973)'
+
 const asColumn = (model: ModelValue) => model.model as Column
 const asMechanism = (model: ModelValue) => model.model as Mechanism
 
@@ -124,8 +128,7 @@ export const critical_load: SheetFunction = {
   summary: 'n-th elastic critical load of a column or mechanism (the lowest when n is left out)',
   explain:
     'm: a model; n: 1 for the lowest, up to 20 for a column. For a column a force, by the exact member with all eigenvalues counted. For a mechanism a load of the dimension that its energy implies, from the Hessian along the path that starts at the unloaded state; for a structure that snaps it is the limit load. An independent second route is always calculated; a difference beyond what is allowed is an error.',
-  source:
-    'Wittrick and Williams (1971) for columns; Thompson and Hunt, A General Theory of Elastic Stability (1973) for mechanisms',
+  source: `${COLUMN_SOURCE} (columns); ${MECHANISM_SOURCE} (mechanisms)`,
   group: 'question',
   call(args, context) {
     expectCount(args, 1, 2, context, this.signature)
@@ -136,7 +139,7 @@ export const critical_load: SheetFunction = {
         context,
         ask(context, () => columnCriticalLoad(asColumn(model), n)),
         FORCE,
-        this.source,
+        COLUMN_SOURCE,
       )
     if (model.of !== 'mechanism') throw wrongModel(model, context, 'critical_load', 'a column or a mechanism')
     const { energy, fn } = asMechanism(model)
@@ -145,7 +148,7 @@ export const critical_load: SheetFunction = {
       context,
       { ...result, route: `${result.route} (${result.kind})` },
       fn.loadDimension,
-      this.source,
+      MECHANISM_SOURCE,
     )
   },
 }
@@ -176,7 +179,7 @@ export const mode_shape: SheetFunction = {
   summary: 'coordinates of a mechanism’s n-th buckling mode, the largest being one of its size',
   explain:
     'm: a mechanism; n: number of the mode, 1 when left out. Gives an array of the coordinates in the order of the energy’s arguments (a list when they differ in dimension).',
-  source: 'Thompson and Hunt, A General Theory of Elastic Stability (1973)',
+  source: MECHANISM_SOURCE,
   group: 'question',
   call(args, context) {
     expectCount(args, 1, 2, context, this.signature)
@@ -243,7 +246,7 @@ export const equilibrium: SheetFunction = {
     'the states of equilibrium of a mechanism under the load P that are found, each stable or unstable',
   explain:
     'm: a mechanism; P: a load. Gives a list of records, nearest to the unloaded state first: each coordinate by its name, `stable` (true or false) and `stability` ("stable", "unstable" or "critical"). Searched within a quarter turn (for a coordinate with a size: 1.57 times the size) of the unloaded state, from a grid of starting points; what is found is listed, and a search does not prove that there is nothing else.',
-  source: 'Thompson and Hunt, A General Theory of Elastic Stability (1973)',
+  source: MECHANISM_SOURCE,
   group: 'question',
   call(args, context) {
     expectCount(args, 2, 2, context, this.signature)
