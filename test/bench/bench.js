@@ -22,7 +22,11 @@ const file = (name) => join(folder, name)
 const node = (...args) => execFileSync(process.execPath, args, { cwd: folder, stdio: 'pipe' })
 
 const entry = await bundleSource('test/bench/entry.ts')
-const { prepareSheet, parseSheet, typeset, htmlText, digestOf } = await import(pathToFileURL(entry).href)
+const { prepareSheet, parseSheet, calculate, verify, typeset, htmlText, digestOf } = await import(
+  pathToFileURL(entry).href
+)
+/** The sheets measured use no other. */
+const ALONE = { loadSheet: (id) => ({ problem: { rule: 'method-unknown', message: id, hint: '' } }) }
 const prepare = (text) => prepareSheet({ path: 'bench.md', text })
 const page = (text, forPdf = false) => {
   const { calculation, findings, verdict } = prepare(text)
@@ -55,25 +59,20 @@ async function wholeProcess() {
   return line('print 40 equations, whole process / plain script', times.ours, times.plain, 1)
 }
 
-/** What reading, calculating and checking add to typesetting the same equations, in a warm process. */
+/** What calculating and checking add to typesetting the same equations, in a warm process. */
 async function warm() {
   const text = sheetOf(40)
   const equations = displayEquations(page(text))
   const settings = { displayMode: true, output: 'htmlAndMathml', throwOnError: true }
+  const { sheet } = parseSheet(text, 'bench.md')
   const times = await measure(rounds * 3, {
     katex: () => equations.forEach((tex) => katex.renderToString(tex, settings)),
-    parse: () => parseSheet(text, 'bench.md'),
+    check: () => verify(calculate(sheet, ALONE)),
     prepare: () => prepare(text),
     page: () => page(text),
   })
-  const { min, median, max } = times.prepare
-  const checking = {
-    min: min - times.parse.min,
-    median: median - times.parse.median,
-    max: max - times.parse.max,
-  }
   return [
-    line('evaluating and checking 40 equations / typesetting them', checking, times.katex, 0.3),
+    line('evaluating and checking 40 equations / typesetting them', times.check, times.katex, 0.3),
     line('reading, evaluating and checking / typesetting', times.prepare, times.katex),
     line('the whole page / typesetting its equations', times.page, times.katex),
   ]
@@ -82,12 +81,18 @@ async function warm() {
 /** Ten times the equations may cost ten times as much; 1 is linear. */
 async function growth() {
   const [small, large] = [sheetOf(200), sheetOf(2000)]
-  const sheets = { small: () => prepare(small), large: () => prepare(large) }
-  const evaluated = await measure(rounds * 3, sheets)
+  const [few, many] = [small, large].map((text) => parseSheet(text, 'bench.md').sheet)
+  const times = await measure(rounds * 3, {
+    few: () => verify(calculate(few, ALONE)),
+    many: () => verify(calculate(many, ALONE)),
+    small: () => parseSheet(small, 'bench.md'),
+    large: () => parseSheet(large, 'bench.md'),
+  })
   const pages = await measure(Math.ceil(rounds / 2), { small: () => page(small), large: () => page(large) })
   return [
-    line('evaluating 2000 equations / 200, by ten', evaluated.large, evaluated.small, 1.3, 10),
-    line('the page of 2000 equations / 200, by ten', pages.large, pages.small, 1.3, 10),
+    line('evaluating and checking 2000 equations / 200, by ten', times.many, times.few, 1.3, 10),
+    line('reading 2000 equations / 200, by ten', times.large, times.small, undefined, 10),
+    line('the whole page of 2000 equations / 200, by ten', pages.large, pages.small, 1.3, 10),
   ]
 }
 
