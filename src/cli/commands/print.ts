@@ -4,6 +4,7 @@ import type { Calculation } from '../../calculate/types.ts'
 import type { Prepared } from '../../pipeline.ts'
 import { PublishProblem } from '../../publish/publish-problem.ts'
 import type { PdfJob } from '../../publish/print-pdf.ts'
+import { writeAtomic } from '../../publish/write-atomic.ts'
 import { digestOf } from '../../record/digest.ts'
 import { programVersion } from '../../version.ts'
 import type { Command, ExitStatus, Io, Options } from '../command.ts'
@@ -90,10 +91,9 @@ async function writeHtml(
   paper: 'A4' | 'Letter' | undefined,
   jobs: Job[],
 ): Promise<{ status: ExitStatus; met: readonly VFileMessage[] }> {
-  const [{ typeset }, { htmlText }, { writeAtomic }] = await Promise.all([
+  const [{ typeset }, { htmlText }] = await Promise.all([
     import('../../typeset/typeset.ts'),
     import('../../publish/html-text.ts'),
-    import('../../publish/write-atomic.ts'),
   ])
   const digest = digestOf(calculation)
   const version = programVersion()
@@ -136,10 +136,7 @@ async function writeHtml(
 
 async function writePdf(jobs: readonly Job[], options: Options, io: Io): Promise<ExitStatus> {
   if (jobs.length === 0) return 0
-  const [{ printPdf }, { writeAtomic }] = await Promise.all([
-    import('../../publish/print-pdf.ts'),
-    import('../../publish/write-atomic.ts'),
-  ])
+  const { printPdf } = await import('../../publish/print-pdf.ts')
   const statuses: ExitStatus[] = []
   const notes = new Set<string>()
   try {
