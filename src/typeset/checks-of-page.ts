@@ -7,13 +7,12 @@ export interface PageChecks {
   readonly own: readonly CheckLine[]
   /** Checks that another sheet of the project makes of itself. */
   readonly others: readonly { readonly sheet: string; readonly check: CheckLine }[]
-  /** Limits of use of methods. */
+  /** Limits of use, of the sheet itself and of the methods it uses. */
   readonly limits: readonly { readonly method: string; readonly check: CheckLine }[]
   readonly governing: CheckLine | undefined
 }
 
 export function checksOfPage(calculation: Calculation): PageChecks {
-  const { sheet } = calculation
   const direct = checksIn(calculation)
   const own = direct.filter(({ validity }) => !validity)
   const used = usedBy(calculation)
@@ -23,7 +22,7 @@ export function checksOfPage(calculation: Calculation): PageChecks {
       .map((check) => ({ sheet: inner.sheet.meta.sheet, check })),
   )
   const limits = [
-    ...direct.filter(({ validity }) => validity).map((check) => ({ method: sheet.meta.sheet, check })),
+    ...direct.filter(({ validity }) => validity).map((check) => ({ method: 'this sheet', check })),
     ...used.flatMap(({ as, calculation: inner }) =>
       checksIn(inner)
         .filter(({ validity }) => validity)

@@ -48,7 +48,7 @@ function headline({ verdict, checks, findings }: Outcome): string {
   const failed = failedChecks(checks).length - failedLimits
   const limits =
     failedLimits > 0
-      ? ` ${counted(failedLimits, 'limit')} of use of a method ${failedLimits === 1 ? 'is' : 'are'} NOT kept.`
+      ? ` ${counted(failedLimits, 'limit')} of use ${failedLimits === 1 ? 'is' : 'are'} NOT kept.`
       : ''
   if (total === 0) return `The sheet has no check of its own; nothing is shown to be adequate.${limits}`
   if (failed > 0)
