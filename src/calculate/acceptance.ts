@@ -1,7 +1,7 @@
 import type { Acceptance, Span } from '../sheet/types.ts'
 import { compare, isRefusal } from './arithmetic.ts'
 import { describeKind, describeValue } from './describe.ts'
-import { inOrder } from './evaluate.ts'
+import { inOrder } from './in-order.ts'
 import { FormulaError } from './formula-error.ts'
 import type { CheckLine, Formula, Operand, Quantity, SolverReport, Value } from './types.ts'
 

@@ -1,7 +1,5 @@
 import type { VFileMessage } from 'vfile-message'
 import { finding, type FindingInput } from '../finding.ts'
-import { nearestName } from '../quantity/nearest-name.ts'
-import { isUnit } from '../quantity/units.ts'
 import type {
   Acceptance,
   Assignment,
@@ -15,11 +13,13 @@ import type {
   Statement,
 } from '../sheet/types.ts'
 import { acceptance, type Side } from './acceptance.ts'
-import { evaluate, type Scope } from './evaluate.ts'
+import { evaluate } from './evaluate.ts'
+import type { Scope } from './scope.ts'
 import { FormulaError } from './formula-error.ts'
 import { findFunction } from './functions/index.ts'
 import { namesIn } from './names-in.ts'
 import { originOf } from './origin.ts'
+import { operandOf } from './operand-of.ts'
 import { isReservedName, parseFormula, type ParsedFormula } from './parse-formula.ts'
 import type {
   CalculatedBlock,
@@ -35,6 +35,7 @@ import type {
   UsedSheet,
   Value,
 } from './types.ts'
+import { undefinedName } from './undefined-name.ts'
 import { useSheet, type BoundInput } from './use-sheet.ts'
 import { declaredKindProblem, fitsKind } from './input-kind.ts'
 
@@ -375,47 +376,7 @@ export class SheetCalculator {
       throw new DependsOnFailure(
         `it depends on \`${name}\` (line ${this.failed.get(name)?.start.line}), which could not be calculated`,
       )
-    throw this.undefinedName(name, span, called)
-  }
-
-  private undefinedName(name: string, span: Span, called: boolean): FormulaError {
-    const later = this.sheet.blocks
-      .flatMap((block) =>
-        block.kind === 'method'
-          ? [{ name: block.as, span: block.asSpan }]
-          : block.statements.flatMap((s) =>
-              s.kind === 'acceptance' ? [] : [{ name: s.name, span: s.nameSpan }],
-            ),
-      )
-      .find((definition) => definition.name === name)
-    if (later) {
-      return new FormulaError(
-        'undefined-name',
-        `\`${name}\` is used here and defined below, in line ${later.span.start.line}`,
-        'move its definition above its use',
-        span,
-      )
-    }
-    if (called)
-      return new FormulaError(
-        'undefined-name',
-        `there is no function \`${name}\``,
-        'define it above in a `working` block; `stanchion explain functions` lists the built-in ones',
-        span,
-      )
-    const near = nearestName(name, [...this.known.keys(), ...this.used.keys()])
-    const power = /^([A-Za-z]+)([2-9])$/.exec(name)
-    const hint =
-      power && isUnit(power[1] as string)
-        ? `did you mean the unit \`${power[1]}^${power[2]}\`?`
-        : isUnit(name)
-          ? `a unit is only read directly after a number: \`1 ${name}\``
-          : near
-            ? `did you mean \`${near}\`?`
-            : findFunction(name)
-              ? `\`${name}\` is a function: \`${findFunction(name)?.signature}\``
-              : 'define it above, in a `given` or `working` block'
-    return new FormulaError('undefined-name', `\`${name}\` is not defined`, hint, span)
+    throw undefinedName({ name, span, called }, this.sheet, [...this.known.keys(), ...this.used.keys()])
   }
 
   /** Refuses a name that is taken or has a fixed meaning. */
@@ -484,23 +445,6 @@ export class BindingError extends Error {
     super(inner.message)
     this.inner = inner
   }
-}
-
-function operandOf(line: NamedLine): Operand {
-  const { value, origin, formula, unit } = line
-  const typed =
-    literal(formula) ??
-    (formula.type === 'name' && origin === 'bound'
-      ? line.operands.get(formula.path.join('.'))?.asTyped
-      : undefined)
-  return { value, origin, ...(typed && !unit ? { asTyped: typed } : {}), ...(unit ? { unit } : {}) }
-}
-
-/** A number or quantity as typed, if that is all the formula is. */
-function literal(formula: Formula): Formula | undefined {
-  if (formula.type === 'number' || formula.type === 'quantity') return formula
-  if (formula.type === 'unary' && formula.operator === '-') return literal(formula.body) && formula
-  return undefined
 }
 
 function isLookup(formula: Formula): boolean {

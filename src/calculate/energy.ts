@@ -1,6 +1,7 @@
 import { DIMENSIONLESS, sameDimension, type Dimension } from '../quantity/dimension.ts'
 import type { Span } from '../sheet/types.ts'
-import { evaluate, type Scope } from './evaluate.ts'
+import { evaluate } from './evaluate.ts'
+import type { Scope } from './scope.ts'
 import { findFunction } from './functions/index.ts'
 import { FormulaError } from './formula-error.ts'
 import { isSmoothFunction, Symbolic, type Term } from './symbolic.ts'

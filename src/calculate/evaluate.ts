@@ -1,45 +1,25 @@
-import { DIMENSIONLESS, sameDimension } from '../quantity/dimension.ts'
+import { DIMENSIONLESS } from '../quantity/dimension.ts'
 import type { Span } from '../sheet/types.ts'
 import {
   add,
   compare,
   divide,
   isNumeric,
-  isRefusal,
   multiply,
   negate,
   power,
   same,
   subtract,
   type Outcome,
-  type Refusal,
 } from './arithmetic.ts'
 import { describeKind, describeValue, quantity } from './describe.ts'
 import { FormulaError } from './formula-error.ts'
+import { inOrder } from './in-order.ts'
+import { itemOf, listOf } from './list-value.ts'
+import { required } from './required.ts'
+import type { Node, Scope } from './scope.ts'
 import { findFunction, nearestFunction } from './functions/index.ts'
-import type {
-  BinaryOperator,
-  Formula,
-  FunctionValue,
-  Quantity,
-  RelationOperator,
-  SolverReport,
-  Value,
-} from './types.ts'
-
-/** Gives names their values, and hears what is learnt on the way. */
-export interface Scope {
-  /** The value of a plain name, or why there is none. */
-  lookup(name: string, span: Span): Value
-  /** A formula's own text, for messages. */
-  source(span: Span): string
-  /** Operations that may still be made; shared by all formulas of a sheet. */
-  readonly budget: { left: number }
-  onBranch?(formula: Formula, taken: boolean): void
-  onReport?(report: SolverReport): void
-}
-
-type Node<T extends Formula['type']> = Extract<Formula, { type: T }>
+import type { BinaryOperator, Formula, FunctionValue, SolverReport, Value } from './types.ts'
 
 /** Sheet functions may call each other this deep; a sheet cannot define a recursion, so this only guards the stack. */
 const MAX_CALLS = 200
@@ -195,188 +175,6 @@ function evaluateRelation(formula: Node<'relation'>, inner: (part: Formula) => V
     }
   })
   return { type: 'truth', value: holds }
-}
-
-/** Whether `a OPERATOR b` holds when a compares to b as `order` compares to 0. */
-export function inOrder(order: number, operator: RelationOperator): boolean {
-  switch (operator) {
-    case '<':
-      return order < 0
-    case '<=':
-      return order <= 0
-    case '>':
-      return order > 0
-    case '>=':
-      return order >= 0
-    case '==':
-      return order === 0
-    case '!=':
-      return order !== 0
-  }
-}
-
-const VERBS: Readonly<Record<string, string>> = {
-  '+': 'add',
-  '-': 'subtract',
-  '*': 'multiply',
-  '/': 'divide',
-  '^': 'raise',
-}
-
-/** Turns a refused operation into a FormulaError at its place, with the values that met. */
-export function required<T extends object>(
-  outcome: Outcome<T>,
-  formula: Formula & { readonly operator?: string; readonly operatorSpan?: Span },
-  parts: readonly Formula[],
-  values: readonly Value[],
-  scope: Scope,
-  verb = VERBS[formula.operator ?? ''] ?? 'use',
-): T {
-  if (!isRefusal(outcome)) return outcome
-  const named = parts.map((part, i) => nameWithValue(part, values[i] as Value, scope))
-  const both = named.join(' and ')
-  const kinds = values.map(describeKind).join(' and ')
-  throw refusalError(outcome, formula, verb, both, named, kinds)
-}
-
-function refusalError(
-  refusal: Refusal,
-  formula: Formula & { readonly operatorSpan?: Span },
-  verb: string,
-  both: string,
-  named: readonly string[],
-  kinds: string,
-): FormulaError {
-  const span = formula.operatorSpan ?? formula.span
-  switch (refusal.refused) {
-    case 'dimension':
-      return new FormulaError(
-        'unit-mismatch',
-        `cannot ${verb} ${both}: ${kinds}`,
-        `check the unit of ${named[1] ?? named[0]}; \`stanchion explain unit-mismatch\` says more`,
-        span,
-      )
-    case 'kind':
-      return new FormulaError(
-        'unit-mismatch',
-        `cannot ${verb} ${both}: ${kinds}`,
-        'use quantities or numbers on both sides',
-        span,
-      )
-    case 'exponent':
-      return new FormulaError(
-        'unit-mismatch',
-        `cannot raise ${named[0]} to the power ${named[1]}: a power is a number without unit`,
-        'divide the exponent by a quantity of its own unit',
-        span,
-      )
-    case 'shape':
-      return new FormulaError(
-        'unit-mismatch',
-        `cannot ${verb} ${both}: their numbers of rows and columns do not fit`,
-        'check the lengths of both',
-        span,
-        refusal.cause,
-      )
-    case 'not-real':
-      return new FormulaError(
-        'not-real',
-        `the result is complex: ${both}`,
-        'check the sign of the quantity under the root or power',
-        formula.span,
-      )
-    case 'not-finite':
-      return new FormulaError(
-        'not-finite',
-        `the result is not a finite number: ${both}`,
-        'check for a division by zero or a quantity outside its range',
-        formula.span,
-      )
-  }
-}
-
-/** `L` (4.6 m); a literal is not repeated. */
-function nameWithValue(part: Formula, value: Value, scope: Scope): string {
-  const source = clip(scope.source(part.span))
-  const isLiteral =
-    part.type === 'number' || part.type === 'quantity' || part.type === 'text' || part.type === 'truth'
-  return isLiteral ? `\`${source}\`` : `\`${source}\` (${describeValue(value)})`
-}
-
-function clip(text: string): string {
-  const flat = text.replace(/\s+/g, ' ')
-  return flat.length > 40 ? `${flat.slice(0, 37)}…` : flat
-}
-
-function listOf(formula: Node<'list'>, values: readonly Value[], scope: Scope): Value {
-  const [first] = values
-  if (!first || !values.every(isNumeric)) return { type: 'list', items: values }
-  const odd = values.findIndex(
-    (value) => !sameDimension((value as Quantity).dimension, (first as Quantity).dimension),
-  )
-  if (odd >= 0) {
-    // Unlike quantities side by side are a list of values (a model's data), not an array for arithmetic.
-    return { type: 'list', items: values }
-  }
-  const { dimension } = first as Quantity
-  if (values.every((value) => value.type === 'quantity'))
-    return { type: 'array', si: values.map((value) => value.si), dimension }
-  const rows = values.map((value) => (value.type === 'array' ? value.si : undefined))
-  const width = rows[0]?.length
-  if (rows.some((row) => row === undefined || row.length !== width || row.some(Array.isArray))) {
-    throw new FormulaError(
-      'unit-mismatch',
-      `the rows of \`${clip(scope.source(formula.span))}\` are not of one length`,
-      'give each row as many entries',
-      formula.span,
-    )
-  }
-  return { type: 'array', si: rows as number[][], dimension }
-}
-
-function itemOf(formula: Node<'item'>, value: Value, indices: readonly Value[], scope: Scope): Value {
-  const numbers = indices.map((index, i) => {
-    const part = formula.indices[i] as Formula
-    if (
-      index.type === 'quantity' &&
-      sameDimension(index.dimension, DIMENSIONLESS) &&
-      Number.isInteger(index.si) &&
-      index.si >= 1
-    )
-      return index.si
-    throw new FormulaError(
-      'function-misused',
-      `the index \`${scope.source(part.span)}\` is ${describeValue(index)}`,
-      'an index is a whole number; the first entry has index 1',
-      part.span,
-    )
-  })
-  let current: unknown = value.type === 'list' ? value.items : value.type === 'array' ? value.si : undefined
-  numbers.forEach((index, i) => {
-    const part = formula.indices[i] as Formula
-    if (!Array.isArray(current)) {
-      throw new FormulaError(
-        'function-misused',
-        `\`${clip(scope.source(formula.of.span))}\` is ${describeKind(value)} and has no entry ${numbers.join(', ')}`,
-        'use as many indices as it has levels',
-        formula.span,
-      )
-    }
-    if (index > current.length) {
-      throw new FormulaError(
-        'function-misused',
-        `entry ${index} was asked for, and there are ${current.length}`,
-        'indices count from 1',
-        part.span,
-      )
-    }
-    current = current[index - 1]
-  })
-  if (value.type === 'list') return current as Value
-  const { dimension } = value as { dimension: Quantity['dimension'] }
-  return typeof current === 'number'
-    ? quantity(current, dimension)
-    : { type: 'array', si: current as number[], dimension }
 }
 
 function evaluateCall(formula: Node<'call'>, scope: Scope, calls: number): Value {
