@@ -8,7 +8,7 @@ import { fileURLToPath, pathToFileURL } from 'node:url'
 import { parseArgs } from 'node:util'
 import katex from 'katex'
 import { bundleSource, importSource } from '../../.config/import-source.js'
-import { measure } from './measure.js'
+import { cpuTime, measure } from './measure.js'
 import { displayEquations, plainMarkdown, sheetOf } from './sheets.js'
 
 const ROOT = fileURLToPath(new URL('../..', import.meta.url))
@@ -65,12 +65,16 @@ async function warm() {
   const equations = displayEquations(page(text))
   const settings = { displayMode: true, output: 'htmlAndMathml', throwOnError: true }
   const { sheet } = parseSheet(text, 'bench.md')
-  const times = await measure(rounds * 3, {
-    katex: () => equations.forEach((tex) => katex.renderToString(tex, settings)),
-    check: () => verify(calculate(sheet, ALONE)),
-    prepare: () => prepare(text),
-    page: () => page(text),
-  })
+  const times = await measure(
+    rounds * 3,
+    {
+      katex: () => equations.forEach((tex) => katex.renderToString(tex, settings)),
+      check: () => verify(calculate(sheet, ALONE)),
+      prepare: () => prepare(text),
+      page: () => page(text),
+    },
+    cpuTime,
+  )
   return [
     line('evaluating and checking 40 equations / typesetting them', times.check, times.katex, 0.3),
     line('reading, evaluating and checking / typesetting', times.prepare, times.katex),
@@ -82,13 +86,21 @@ async function warm() {
 async function growth() {
   const [small, large] = [sheetOf(200), sheetOf(2000)]
   const [few, many] = [small, large].map((text) => parseSheet(text, 'bench.md').sheet)
-  const times = await measure(rounds * 3, {
-    few: () => verify(calculate(few, ALONE)),
-    many: () => verify(calculate(many, ALONE)),
-    small: () => parseSheet(small, 'bench.md'),
-    large: () => parseSheet(large, 'bench.md'),
-  })
-  const pages = await measure(Math.ceil(rounds / 2), { small: () => page(small), large: () => page(large) })
+  const times = await measure(
+    rounds * 3,
+    {
+      few: () => verify(calculate(few, ALONE)),
+      many: () => verify(calculate(many, ALONE)),
+      small: () => parseSheet(small, 'bench.md'),
+      large: () => parseSheet(large, 'bench.md'),
+    },
+    cpuTime,
+  )
+  const pages = await measure(
+    Math.ceil(rounds / 2),
+    { small: () => page(small), large: () => page(large) },
+    cpuTime,
+  )
   return [
     line('evaluating and checking 2000 equations / 200, by ten', times.many, times.few, 1.3, 10),
     line('reading 2000 equations / 200, by ten', times.large, times.small, undefined, 10),
