@@ -1,13 +1,13 @@
 import { DIMENSIONLESS, sameDimension, type Dimension } from '../quantity/dimension.ts'
 import type { Span } from '../sheet/types.ts'
 import { evaluate } from './evaluate.ts'
-import type { Scope } from './scope.ts'
+import { scopeOfFunction } from './scope.ts'
 import { findFunction } from './functions/index.ts'
 import { FormulaError } from './formula-error.ts'
 import { isSmoothFunction, Symbolic, type Term } from './symbolic.ts'
 import { quantity } from './describe.ts'
 import { partsOf } from './parts-of.ts'
-import type { Formula, FunctionValue, Quantity, Value } from './types.ts'
+import type { Formula, FunctionValue, Quantity } from './types.ts'
 
 /** What a coordinate is measured by: 1 for an angle, or the size that the sheet gives. */
 export interface CoordinateSize {
@@ -120,7 +120,7 @@ function findLoadDimension(
       quantity(1, loadDimension),
     ]
     try {
-      const value = evaluate(fn.body, scopeOf(fn, args, context))
+      const value = evaluate(fn.body, scopeOfFunction(fn, args, context))
       if (value.type !== 'quantity')
         throw new FormulaError(
           'function-misused',
@@ -150,28 +150,10 @@ function findLoadDimension(
   return chosen
 }
 
-function scopeOf(fn: FunctionValue, args: readonly Value[], context: EnergyContext): Scope {
-  const local = new Map(fn.parameters.map((name, i) => [name, args[i] as Value]))
-  return {
-    lookup: (name, span) => {
-      const value = local.get(name) ?? fn.names.get(name)
-      if (value) return value
-      throw new FormulaError(
-        'undefined-name',
-        `\`${name}\` is not defined`,
-        'define it above the function',
-        span,
-      )
-    },
-    source: (span) => context.source(span),
-    budget: context.budget,
-  }
-}
-
 /** Turns a function's body into a term, with `args` in place of its parameters. What holds no parameter is calculated once. */
 function toTerm(fn: FunctionValue, args: readonly Term[], graph: Symbolic, context: EnergyContext): Term {
   const parameters = new Map(fn.parameters.map((name, i) => [name, args[i] as Term]))
-  const scope = scopeOf({ ...fn, parameters: [] }, [], context)
+  const scope = scopeOfFunction({ ...fn, parameters: [] }, [], context)
   const convert = (formula: Formula): Term => {
     if (--context.budget.left < 0) throw refuse(formula, 'needs more operations than are allowed')
     if (!mentions(formula, parameters)) {

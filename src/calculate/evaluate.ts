@@ -17,9 +17,9 @@ import { FormulaError } from './formula-error.ts'
 import { inOrder } from './in-order.ts'
 import { itemOf, listOf } from './list-value.ts'
 import { required } from './required.ts'
-import type { Node, Scope } from './scope.ts'
+import { scopeOfFunction, type Node, type Scope } from './scope.ts'
 import { findFunction, nearestFunction } from './functions/index.ts'
-import type { BinaryOperator, Formula, FunctionValue, SolverReport, Value } from './types.ts'
+import type { BinaryOperator, Formula, FunctionValue, Value } from './types.ts'
 
 /** Sheet functions may call each other this deep; a sheet cannot define a recursion, so this only guards the stack. */
 const MAX_CALLS = 200
@@ -257,21 +257,5 @@ export function applyFunction(fn: FunctionValue, args: readonly Value[], scope: 
       fn.body.span,
     )
   }
-  const local = new Map(fn.parameters.map((parameter, i) => [parameter, args[i] as Value]))
-  const body: Scope = {
-    lookup: (name, span) => {
-      const value = local.get(name) ?? fn.names.get(name)
-      if (value) return value
-      throw new FormulaError(
-        'undefined-name',
-        `\`${name}\` is not defined`,
-        'define it above the function',
-        span,
-      )
-    },
-    source: (span) => scope.source(span),
-    budget: scope.budget,
-    ...(scope.onReport ? { onReport: (report: SolverReport) => scope.onReport?.(report) } : {}),
-  }
-  return evaluate(fn.body, body, calls)
+  return evaluate(fn.body, scopeOfFunction(fn, args, scope), calls)
 }

@@ -1,5 +1,6 @@
 import type { Span } from '../sheet/types.ts'
-import type { Formula, SolverReport, Value } from './types.ts'
+import { FormulaError } from './formula-error.ts'
+import type { Formula, FunctionValue, SolverReport, Value } from './types.ts'
 
 /** Gives names their values, and hears what is learnt on the way. */
 export interface Scope {
@@ -15,3 +16,27 @@ export interface Scope {
 
 /** The formulas of one type. */
 export type Node<T extends Formula['type']> = Extract<Formula, { type: T }>
+
+/** What the body of a sheet's function sees: its arguments, and the names as they were where it is defined. */
+export function scopeOfFunction(
+  fn: FunctionValue,
+  args: readonly Value[],
+  outer: Pick<Scope, 'source' | 'budget' | 'onReport'>,
+): Scope {
+  const local = new Map(fn.parameters.map((parameter, i) => [parameter, args[i] as Value]))
+  return {
+    lookup: (name, span) => {
+      const value = local.get(name) ?? fn.names.get(name)
+      if (value) return value
+      throw new FormulaError(
+        'undefined-name',
+        `\`${name}\` is not defined`,
+        'define it above the function',
+        span,
+      )
+    },
+    source: (span) => outer.source(span),
+    budget: outer.budget,
+    onReport: (report) => outer.onReport?.(report),
+  }
+}
