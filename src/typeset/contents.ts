@@ -35,7 +35,8 @@ export function contents(body: readonly ElementContent[], numbers: LineNumbers):
     ? []
     : [
         h('nav', { className: 'contents', ariaLabel: 'Contents' }, [
-          h('h2', ['Contents ', h('span', { className: 'aside' }, 'with the numbers of the lines')]),
+          h('h2', 'Contents'),
+          h('p', { className: 'aside' }, 'Section, and the numbers of its lines'),
           h('ol', items),
         ]),
       ]

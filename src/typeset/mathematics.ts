@@ -1,4 +1,5 @@
 import type { ElementContent } from 'hast'
+import { h } from 'hastscript'
 import type { CheckLine, NamedLine, Value } from '../calculate/types.ts'
 import { checkEquation } from './equation/check-equation.ts'
 import { equation } from './equation/equation.ts'
@@ -8,8 +9,12 @@ import { pathTex, pathWords } from './equation/symbol.ts'
 import { valueTex } from './equation/value-tex.ts'
 import type { Page } from './scope.ts'
 
+/** A longer name is no symbol: it stands as written, and can be broken. */
+const LONGEST = 24
+
 /** The symbol of a name or dotted path. */
 export function symbolMath(name: string, page: Page): ElementContent[] {
+  if (name.length > LONGEST) return [h('code', name)]
   const path = name.split('.')
   return inText(pathTex(path), pathWords(path), page)
 }

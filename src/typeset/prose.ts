@@ -165,6 +165,7 @@ function inDocument(tree: HastRoot, { ranks, prefix, insteadOf }: InDocument): v
   visit(tree as HastNodes, 'element', (element, index, parent) => {
     const other = element.tagName === 'img' ? insteadOf(element) : undefined
     if (other && parent && index !== undefined) parent.children[index] = other
+    breakLongWords(element)
     const rank = /^h([1-6])$/.exec(element.tagName)?.[1]
     if (rank !== undefined) element.tagName = `h${String(Math.min(6, Number(rank) + ranks))}`
     if (prefix === '') return
@@ -172,6 +173,26 @@ function inDocument(tree: HastRoot, { ranks, prefix, insteadOf }: InDocument): v
     if (typeof id === 'string') element.properties.id = prefix + id
     if (typeof href === 'string' && href.startsWith('#'))
       element.properties.href = `#${prefix}${href.slice(1)}`
+  })
+}
+
+/** A word longer than a line, such as a hash, would run out of its lane. */
+const LONG_WORD = /\S{41,}/
+const PIECES = /.{1,20}/gsu
+
+function breakLongWords(element: Element): void {
+  if (!element.children.some((child) => child.type === 'text' && LONG_WORD.test(child.value))) return
+  element.children = element.children.flatMap((child) =>
+    child.type === 'text' ? broken(child.value) : child,
+  )
+}
+
+/** The text with a place for a break every so often in its long words; copied, it is the same text. */
+function broken(text: string): ElementContent[] {
+  const pieces = LONG_WORD.test(text) ? (text.match(PIECES) ?? []) : [text]
+  return pieces.flatMap((value, i): ElementContent[] => {
+    const piece: Text = { type: 'text', value }
+    return i === 0 ? [piece] : [{ type: 'element', tagName: 'wbr', properties: {}, children: [] }, piece]
   })
 }
 

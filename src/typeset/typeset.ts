@@ -20,6 +20,7 @@ import { cautions, reviewNotice, STATUS } from './notices.ts'
 import { openPoints } from './open-points.ts'
 import { fillTemplate, type Slots } from './page-template.ts'
 import { peopleTable } from './people.ts'
+import { usePlainTags } from './pdf-tags.ts'
 import { references } from './references.ts'
 import type { Page, Scope } from './scope.ts'
 import { styleText, type Paper } from './style-text.ts'
@@ -77,6 +78,7 @@ export function typeset(calculation: Calculation, options: TypesetOptions): Root
     record: computationRecord(calculation, options, page),
     cautions: [cautions()],
   })
+  if (page.forPdf) usePlainTags(tree)
   completeHead(tree, calculation.sheet.meta, options, outcome)
   tree.data = { findings: page.problems }
   return tree
