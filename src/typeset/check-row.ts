@@ -40,9 +40,11 @@ function slimRow(line: CheckLine, scope: Scope): Element {
     [
       h('p', { className: 'meaning' }, [
         ...(meaning === undefined ? [] : [`${meaning}: `]),
-        ...checkMathInText(line, scope.page),
-        ' ',
-        verdictWord(line.verdict),
+        h('span', { className: 'together' }, [
+          ...checkMathInText(line, scope.page),
+          ' ',
+          verdictWord(line.verdict),
+        ]),
       ]),
       ...solverNotes(line.reports, scope.page),
     ],
