@@ -1,5 +1,5 @@
 import fc from 'fast-check'
-import { all, create } from 'mathjs'
+import { all, create, type FactoryFunctionMap } from 'mathjs'
 import { describe, expect, test } from 'vitest'
 import { evaluate } from '../../src/calculate/evaluate.ts'
 import type { Scope } from '../../src/calculate/scope.ts'
@@ -9,7 +9,7 @@ import type { Value } from '../../src/calculate/types.ts'
 import { Places } from '../../src/sheet/places.ts'
 
 /** mathjs with exact comparisons, which a check needs; by default it takes 1e-16 and 0 for equal. */
-const reference = create(all, { relTol: 1e-300, absTol: 0 })
+const reference = create(all as FactoryFunctionMap, { relTol: 1e-300, absTol: 0 })
 const mathjs = (text: string, scope: object): unknown => reference.evaluate(text, scope)
 
 const NAMES: Readonly<Record<string, number>> = { a: 1.25, b: -0.75, x_1: 3, lambda_bar: 0.5 }
