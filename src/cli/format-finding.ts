@@ -1,9 +1,12 @@
 import type { VFileMessage } from 'vfile-message'
 import { severityOf } from '../finding.ts'
 import { cleanText } from './clean-text.ts'
+import { displayWidth } from './display-width.ts'
 
 /** Longest excerpt of a line, in characters; what is cut off is marked. */
 const WIDTH = 100
+/** Characters shown before the place of a finding that lies far out in its line. */
+const BEFORE = 40
 
 /**
  * A finding with its place, the line it stands in, a caret under the place, and its hint.
@@ -26,40 +29,29 @@ function endColumn(message: VFileMessage, source: string): number {
   return place.end.line === place.start.line ? place.end.column : source.length + 1
 }
 
+/** The line, and the line of carets below it; `from` and `to` are columns, counted from 1 in UTF-16 units as editors do. */
 function excerptOf(source: string, line: number, from: number, to: number): string[] {
+  const start = from > WIDTH - BEFORE / 2 ? wholeCharacter(source, from - BEFORE) : 0
+  const end = wholeCharacter(source, start + WIDTH)
+  const before = (start > 0 ? '…' : '') + cleanText(source.slice(start, Math.max(from - 1, start)))
+  const marked = cleanText(source.slice(Math.max(from - 1, start), Math.min(Math.max(to - 1, start), end)))
+  const shown = `${start > 0 ? '…' : ''}${cleanText(source.slice(start, end))}${end < source.length ? '…' : ''}`
   const label = `${line} | `
-  const start = from > WIDTH - 20 ? from - 40 : 0
-  const cut = source.slice(start, start + WIDTH)
-  const lead = start > 0 ? '…' : ''
-  const tail = start + WIDTH < source.length ? '…' : ''
-  const before = lead + cut.slice(0, Math.max(from - 1 - start, 0))
-  const marked = cut.slice(Math.max(from - 1 - start, 0), Math.max(to - 1 - start, 0))
-  const pad = [...before]
-    .map((character) => (character === '\t' ? '\t' : ' '.repeat(columns(character))))
-    .join('')
-  const carets = '^'.repeat(
-    Math.max(
-      [...marked].reduce((sum, character) => sum + columns(character), 0),
-      1,
-    ),
-  )
-  return [`${label}${lead}${cut}${tail}`, `${' '.repeat(label.length - 2)}| ${pad}${carets}`]
+  const margin = `${' '.repeat(label.length - 2)}| `
+  return [`${label}${shown}`, `${margin}${blank(before)}${'^'.repeat(Math.max(displayWidth(marked), 1))}`]
 }
 
-/** Columns that a character takes on a terminal: none for a combining mark, two for a wide one. */
-function columns(character: string): number {
-  if (/\p{Mark}/u.test(character)) return 0
-  const code = character.codePointAt(0) as number
-  const wide =
-    (code >= 0x1100 && code <= 0x115f) ||
-    (code >= 0x2e80 && code <= 0xa4cf) ||
-    (code >= 0xac00 && code <= 0xd7a3) ||
-    (code >= 0xf900 && code <= 0xfaff) ||
-    (code >= 0xfe30 && code <= 0xfe6f) ||
-    (code >= 0xff00 && code <= 0xff60) ||
-    (code >= 0x1f300 && code <= 0x1faff) ||
-    (code >= 0x20000 && code <= 0x3fffd)
-  return wide ? 2 : 1
+/** The offset, or the one before it where that would part a character outside the Basic Multilingual Plane. */
+function wholeCharacter(source: string, offset: number): number {
+  return /[\udc00-\udfff]/.test(source.charAt(offset)) ? offset - 1 : offset
+}
+
+/** As wide as the text: blanks, and tabs where it has tabs. */
+function blank(text: string): string {
+  return text
+    .split('\t')
+    .map((part) => ' '.repeat(displayWidth(part)))
+    .join('\t')
 }
 
 /** `2 errors, 1 warning in 1 sheet`, or nothing when there are no findings. */

@@ -9,14 +9,27 @@ const io: Io = {
   async readStdin() {
     const chunks: Buffer[] = []
     for await (const chunk of process.stdin) chunks.push(chunk as Buffer)
-    return Buffer.concat(chunks).toString('utf8')
+    return Buffer.concat(chunks)
   },
 }
 
-// The reader of a pipe may close it early (`| head`); that is no error.
-process.stdout.on('error', (error: NodeJS.ErrnoException) => {
-  if (error.code !== 'EPIPE') throw error
-  process.exit()
-})
+let lost = false
 
-process.exitCode = await run(process.argv.slice(2), io)
+/**
+ * The reader of a pipe may close it early (`| head`): that is no error, and what is left to do is done without it. Anything
+ * else, such as a full disk, means that the product is not whole.
+ */
+function onWriteError(error: NodeJS.ErrnoException): void {
+  if (error.code === 'EPIPE' || lost) return
+  lost = true
+  process.exitCode = 2
+  io.err(
+    `stanchion: standard output cannot be written (${error.code ?? error.message})\nhint: check where it is sent and the space there\n`,
+  )
+}
+
+process.stdout.on('error', onWriteError)
+process.stderr.on('error', onWriteError)
+
+const status = await run(process.argv.slice(2), io)
+process.exitCode = lost ? 2 : status

@@ -1,12 +1,11 @@
 import { prepareSheet, type Prepared } from '../pipeline.ts'
 import { SheetLibrary } from '../sheet/library.ts'
-import { finding } from '../finding.ts'
-import { formatFinding, summaryLine } from './format-finding.ts'
+import { decodeText, unreadable, type ReadText } from '../sheet/read-text.ts'
 import { UsageError, type ExitStatus, type Io } from './command.ts'
+import { formatFinding, summaryLine } from './format-finding.ts'
+import { aboutFile, failedAt } from './internal-error.ts'
 
 export const STDIN = '<standard input>'
-
-const START = { start: { line: 1, column: 1, offset: 0 }, end: { line: 1, column: 1, offset: 0 } }
 
 /** Prepares each sheet in turn (`-` is standard input), so that one bad sheet never stops the rest. */
 export async function* prepareAll(paths: readonly string[], io: Io): AsyncGenerator<Prepared> {
@@ -14,30 +13,39 @@ export async function* prepareAll(paths: readonly string[], io: Io): AsyncGenera
     throw new UsageError('`-` is given twice', 'standard input can be read once')
   const library = new SheetLibrary()
   for (const path of paths) {
-    if (path !== '-') yield guarded(path, () => prepareSheet({ path }, { cwd: io.cwd, library }))
-    else {
-      const text = await io.readStdin()
-      yield guarded(STDIN, () => prepareSheet({ path: STDIN, text }, { cwd: io.cwd, library }))
-    }
+    if (path === '-') yield prepareText(STDIN, await readStdin(io), library, io)
+    else yield guarded(path, () => prepareSheet({ path }, { cwd: io.cwd, library }))
   }
 }
 
-/** A failure of the program itself becomes a finding too; `--debug` shows where it happened. */
+/** Prepares a sheet whose text came another way than from the file `path`. */
+export function prepareText(path: string, read: ReadText, library: SheetLibrary, io: Io): Prepared {
+  if ('problem' in read) {
+    const { problem: message, hint } = read
+    return unknown(path, [aboutFile({ rule: 'file-unreadable', message, hint, file: path })])
+  }
+  return guarded(path, () => prepareSheet({ path, text: read.text }, { cwd: io.cwd, library }))
+}
+
+async function readStdin(io: Io): Promise<ReadText> {
+  try {
+    return decodeText(await io.readStdin())
+  } catch (error) {
+    return unreadable(error)
+  }
+}
+
+/** A failure of the program itself is a finding of the sheet it was at. */
 function guarded(path: string, prepare: () => Prepared): Prepared {
   try {
     return prepare()
   } catch (cause) {
-    const message = cause instanceof Error ? cause.message : String(cause)
-    const unforeseen = finding({
-      rule: 'internal-error',
-      message: `the program failed: ${message}`,
-      hint: 'run again with `--debug`, and report what it prints',
-      file: path,
-      span: START,
-      cause,
-    })
-    return { path, findings: [unforeseen], verdict: 'error', texts: new Map() }
+    return failedAt(unknown(path), cause)
   }
+}
+
+function unknown(path: string, findings: Prepared['findings'] = []): Prepared {
+  return { path, findings, verdict: 'error', texts: new Map() }
 }
 
 /** Prints all findings of the sheets with their excerpts, and the summary, as messages. */

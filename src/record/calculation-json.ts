@@ -112,7 +112,7 @@ function plain(value: Value): JsonObject {
         fields: Object.fromEntries(Object.entries(value.fields).map(([key, field]) => [key, plain(field)])),
       }
     case 'list':
-      return { items: value.items.map(plain) }
+      return { value: value.items.map(plain) }
     case 'function':
       return { parameters: value.parameters }
     case 'model':
@@ -141,7 +141,8 @@ function checkJson(check: CheckLine, { used }: Part, profile: Profile): Json {
   return {
     title,
     demand: side(demand, shownDemand.text),
-    relation: statement.relation,
+    // Demand and capacity are told apart already: `a >= b` asks for the demand b to be at most the capacity a.
+    relation: statement.relation.length === 2 ? '<=' : '<',
     capacity: side(capacity, shownCapacity.text),
     utilisation,
     verdict,

@@ -34,7 +34,7 @@ export const calculationSchema = z.strictObject({
     z.strictObject({
       title: z.string(),
       demand: side,
-      relation: z.enum(['<=', '<', '>=', '>']),
+      relation: z.enum(['<=', '<']).describe('Between demand and capacity; holds when the verdict is pass'),
       capacity: side,
       utilisation: z.number().optional(),
       verdict: z.enum(['pass', 'fail']),

@@ -1,9 +1,16 @@
 export type Json =
   string | number | boolean | null | readonly Json[] | { readonly [key: string]: Json | undefined }
 
-/** JSON text with keys sorted and entries that are undefined left out: the same value gives the same bytes. */
+/** What JSON may leave as it is, but a terminal may obey: control characters beyond ASCII's first, and marks that turn text. */
+const UNSAFE = /[\u007f-\u009f\u061c\u200e\u200f\u2028-\u202e\u2066-\u2069]/g
+
+/**
+ * JSON text with keys sorted and entries that are undefined left out: the same value gives the same bytes. Characters that
+ * could act on a terminal are escaped.
+ */
 export function stableJson(value: Json, indent = 2): string {
-  return `${JSON.stringify(sorted(value), null, indent)}\n`
+  const text = JSON.stringify(sorted(value), null, indent)
+  return `${text.replace(UNSAFE, (c) => `\\u${c.charCodeAt(0).toString(16).padStart(4, '0')}`)}\n`
 }
 
 function sorted(value: Json): Json {

@@ -9,16 +9,24 @@ const MAX_BYTES = 20_000_000
 export function readText(path: string): ReadText {
   let bytes: Uint8Array
   try {
-    const { size } = statSync(path)
-    if (size > MAX_BYTES)
+    const stats = statSync(path)
+    // A device may have no end.
+    if (stats.isCharacterDevice() || stats.isBlockDevice())
       return {
-        problem: `the file has ${size} bytes, and ${MAX_BYTES} are allowed`,
-        hint: 'divide it into several sheets',
+        problem: 'this is a device, and a sheet was expected',
+        hint: 'name the sheet; `-` reads standard input',
       }
+    if (stats.size > MAX_BYTES) return tooLarge(stats.size)
     bytes = readFileSync(path)
   } catch (error) {
     return unreadable(error)
   }
+  return decodeText(bytes)
+}
+
+/** The text that bytes are in UTF-8, or why they are none. */
+export function decodeText(bytes: Uint8Array): ReadText {
+  if (bytes.length > MAX_BYTES) return tooLarge(bytes.length)
   try {
     return { text: new TextDecoder('utf-8', { fatal: true }).decode(bytes) }
   } catch (error) {
@@ -30,7 +38,15 @@ export function readText(path: string): ReadText {
   }
 }
 
-function unreadable(error: unknown): ReadText {
+function tooLarge(size: number): ReadText {
+  return {
+    problem: `the file has ${size} bytes, and ${MAX_BYTES} are allowed`,
+    hint: 'divide it into several sheets',
+  }
+}
+
+/** What an error of the file system means for who wanted the text. */
+export function unreadable(error: unknown): ReadText {
   const code = (error as NodeJS.ErrnoException).code
   switch (code) {
     case 'ENOENT':

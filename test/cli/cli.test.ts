@@ -1,7 +1,6 @@
 import {
   cpSync,
   existsSync,
-  mkdirSync,
   mkdtempSync,
   readdirSync,
   readFileSync,
@@ -84,11 +83,6 @@ describe('findings', () => {
     const { out, err } = await cli('check', 'hostile.md')
     expect(out + err).not.toMatch(/[\u001b\u202e]/)
   })
-
-  test('an error of the program itself is one finding, with a stack only on request', async () => {
-    const { out, err } = await cli('check', 'good.md', '--debug')
-    expect(out + err).not.toMatch(/^\s+at /m)
-  })
 })
 
 describe('standard input', () => {
@@ -103,12 +97,31 @@ describe('standard input', () => {
   test('cannot be read twice', async () => {
     expect((await runCli(['check', '-', '-'], folder, GOOD)).status).toBe(2)
   })
+  test('that is not text is refused as such a file is', async () => {
+    const { status, err } = await runCli(['check', '-'], folder, Uint8Array.of(0x2d, 0xe9, 0xff))
+    expect(status).toBe(2)
+    expect(err).toMatch(/^<standard input>:1:1: error: the file is not text in UTF-8  file-unreadable/)
+  })
+  test('that cannot be read does not stop the other sheets', async () => {
+    const broken = Object.assign(new Error('EISDIR: illegal operation on a directory'), { code: 'EISDIR' })
+    const { status, err, out } = await runCli(['check', '-', 'good.md'], folder, broken)
+    expect(status).toBe(2)
+    expect(err).toMatch(/this is a folder, and a sheet was expected {2}file-unreadable/)
+    expect(out).toContain('every check passes')
+  })
 })
 
 describe('usage', () => {
   test.each([
     [['chekc', 'x'], /there is no command `chekc`\nhint: did you mean `check`\?/],
-    [['check'], /missing required argument/],
+    [['check'], /`check` needs `<sheet\.\.\.>`\nhint: call it as `stanchion check <sheet\.\.\.>`/],
+    [['explain', 'kN', 'kip'], /`explain` takes 1 argument, and 2 are given/],
+    [['print', 'good.md', '-o'], /the option `-o, --output <dir>` needs a value/],
+    [['print', 'good.md', '--browser', 'x'], /no PDF is asked for\nhint: add `--pdf`/],
+    [['good.md'], /there is no command `good\.md`\nhint: .*`stanchion check good\.md`/],
+    [['check', 'good.md', '--quiet'], /there is no option `--quiet`\nhint: `stanchion check --help` lists/],
+    [['--versoin'], /there is no option `--versoin`\nhint: did you mean `--version`\?/],
+    [['values', '--textconv', '.', 'good.md', 'bad.md'], /`--textconv` takes one file/],
     [['check', 'good.md', '--jsn'], /there is no option `--jsn`\nhint: did you mean `--json`\?/],
     [['print', 'good.md', '--paper', 'A5'], /`--paper A5` is not a size/],
     [['print', '-'], /`-` needs a folder/],
@@ -140,6 +153,8 @@ describe('files that cannot be read', () => {
     ['.', /this is a folder/],
     ['latin1.md', /not text in UTF-8/],
     ['good.md/x.md', /there is no such file/],
+    ['/dev/zero', /this is a device/],
+    ['good\0.md', /this is not a usable path/],
   ])('%s', async (path, message) => {
     writeFileSync(join(folder, 'latin1.md'), Buffer.from([0x2d, 0x2d, 0xe9, 0xff]))
     const { status, err } = await cli('check', path)
@@ -149,74 +164,32 @@ describe('files that cannot be read', () => {
   })
 })
 
-describe('print', () => {
-  test('writes the document beside the sheet and says where', async () => {
-    const { status, out } = await cli('print', 'good.md')
-    expect(status).toBe(0)
-    expect(out.trim()).toBe(join(folder, 'good.html'))
-    expect(readFileSync(join(folder, 'good.html'), 'utf8')).toMatch(/^<!doctype html>/i)
-  })
-
-  test('a sheet whose check fails is printed; one that is not calculated is not', async () => {
-    expect((await cli('print', 'failing.md')).status).toBe(1)
-    const bad = await cli('print', 'bad.md')
-    expect(bad.status).toBe(2)
-    expect(bad.err).toContain('bad.md: not written')
-    expect(readdirSync(folder).filter((file) => file.endsWith('.html'))).toEqual(['failing.html'])
-  })
-
-  test('makes the output folder; two sheets never share a file', async () => {
-    mkdirSync(join(folder, 'sub'))
-    write('sub/good.md', GOOD)
-    expect((await cli('print', 'good.md', '-o', 'out/deep')).status).toBe(0)
-    expect(existsSync(join(folder, 'out/deep/good.html'))).toBe(true)
-    const clash = await cli('print', 'good.md', 'sub/good.md', '-o', 'out')
-    expect(clash.status).toBe(2)
-    expect(clash.err).toMatch(/would both be written/)
-  })
-
-  test('the same sheet gives the same bytes in another folder', async () => {
-    await cli('print', 'good.md')
-    const other = mkdtempSync(join(tmpdir(), 'stanchion-other-'))
-    writeFileSync(join(other, 'good.md'), GOOD.replaceAll('\n', '\r\n'))
-    await runCli(['print', 'good.md'], other)
-    expect(readFileSync(join(other, 'good.html'), 'utf8')).toBe(
-      readFileSync(join(folder, 'good.html'), 'utf8'),
-    )
-    rmSync(other, { recursive: true })
-  })
-
-  test('a folder that cannot be made, since a file stands there', async () => {
-    const { status, err } = await cli('print', 'good.md', '-o', 'bad.md/out')
-    expect(status).toBe(2)
-    expect(err).toMatch(/output-unwritable/)
-    expect(readFileSync(join(folder, 'bad.md'), 'utf8')).toBe(BAD)
-  })
-
-  test('an output that is a folder', async () => {
-    mkdirSync(join(folder, 'good.html'))
-    const { status, err } = await cli('print', 'good.md')
-    expect(status).toBe(2)
-    expect(err).toMatch(/output-unwritable/)
-  })
-
-  test('no browser', async () => {
-    const { status, err } = await cli('print', 'good.md', '--pdf', '--browser', join(folder, 'none'))
-    expect(status).toBe(2)
-    expect(err).toMatch(/browser/)
-    expect(err).not.toMatch(/^\s+at /m)
-    expect(readdirSync(folder).filter((file) => file.endsWith('.pdf'))).toEqual([])
-  })
-})
-
-describe('values', () => {
-  test('one line a value, in the order of the document', async () => {
-    const { out } = await cli('values', 'good.md')
-    expect(out).toBe('N_Ed = 285 kN  # force\ncheck strength: 285 kN against 301 kN 0.947 OK\n')
-  })
-})
-
 describe('explain', () => {
+  test('of a sheet of one’s own says what it takes and gives', async () => {
+    await cli('new', 'method', '-o', 'own.md')
+    const { status, out } = await cli('explain', 'own.md')
+    expect(status).toBe(0)
+    expect(out).toMatch(/Inputs\n {2}L_cr {3}length {2}effective length\n/)
+    expect(out).toMatch(/Results\n {2}slenderness {2}slenderness\n/)
+    expect(out).toMatch(/Limits of use\n {2}slenderness <= limit {2}within the range of the method\n/)
+  })
+
+  test.each([
+    ['missing.md', /`missing\.md`: there is no such file/],
+    ['en1993-1-1/9.9', /nothing is known by the name/],
+    ['KN', /did you mean `kN`\?/],
+    ['__proto__', /nothing is known by the name `__proto__`/],
+    ['toString', /nothing is known by the name `toString`/],
+  ])('of what is not there: %s', async (id, message) => {
+    const { status, err } = await cli('explain', id)
+    expect(status).toBe(2)
+    expect(err).toMatch(message)
+  })
+
+  test('gives the factor of a unit, as NIST SP 811 has it: 1 kip = 4448.2216 N', async () => {
+    expect((await cli('explain', 'kip')).out).toMatch(/^1 kip = 4448\.2216\d+ in SI units, force$/m)
+  })
+
   test('knows every finding, function, method, kind and unit', async () => {
     for (const id of [
       ...Object.keys(RULES),
@@ -228,6 +201,7 @@ describe('explain', () => {
       'kinds',
       'functions',
       'findings',
+      'methods',
     ]) {
       const { status, out } = await cli('explain', id)
       expect([id, status]).toEqual([id, 0])

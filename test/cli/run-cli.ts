@@ -8,7 +8,11 @@ export interface Ran {
 }
 
 /** Runs the command line in this process. */
-export async function runCli(argv: readonly string[], cwd: string, stdin = ''): Promise<Ran> {
+export async function runCli(
+  argv: readonly string[],
+  cwd: string,
+  stdin: string | Uint8Array | Error = '',
+): Promise<Ran> {
   let out = ''
   let err = ''
   const io: Io = {
@@ -16,7 +20,10 @@ export async function runCli(argv: readonly string[], cwd: string, stdin = ''): 
     env: {},
     out: (text) => void (out += text),
     err: (text) => void (err += text),
-    readStdin: () => Promise.resolve(stdin),
+    readStdin: () =>
+      stdin instanceof Error
+        ? Promise.reject(stdin)
+        : Promise.resolve(typeof stdin === 'string' ? new TextEncoder().encode(stdin) : stdin),
   }
   const status = await run(argv, io)
   return { status, out, err }

@@ -1,5 +1,6 @@
 import type { CheckLine } from '../../calculate/types.ts'
 import type { Prepared } from '../../pipeline.ts'
+import type { Profile } from '../../quantity/profile.ts'
 import { showComparison } from '../../quantity/show-comparison.ts'
 import { showUtilisation } from '../../quantity/show.ts'
 import { calculationJson } from '../../record/calculation-json.ts'
@@ -8,35 +9,33 @@ import { stableJson } from '../../record/stable-json.ts'
 import { governingCheck } from '../../verify/verdict.ts'
 import { checksOf } from '../../verify/verify.ts'
 import { cleanText } from '../clean-text.ts'
-import type { Command } from '../command.ts'
-import { exitStatus, prepareAll, reportFindings, worst } from '../sheets.ts'
 import { columns } from '../columns.ts'
+import type { ExitStatus, Io, Options } from '../command.ts'
+import { failedAt } from '../internal-error.ts'
+import { exitStatus, prepareAll, reportFindings, worst } from '../sheets.ts'
 
-export const check: Command = {
-  name: 'check',
-  args: '<sheet...>',
-  summary: 'calculate sheets and report verdicts and findings; write nothing',
-  details:
-    'Prints a table of all checks of each sheet, with utilisations, the governing one marked, and the findings. `-` reads a sheet from standard input.',
-  flags: [
-    {
-      flags: '--json',
-      summary: 'print the calculation as JSON (one object, or an array for several sheets)',
-    },
-  ],
-  async run(args, options, io) {
-    const prepared: Prepared[] = []
-    for await (const sheet of prepareAll(args, io)) {
-      prepared.push(sheet)
-      if (!options['json']) io.out(reportText(sheet))
+export async function run(args: readonly string[], options: Options, io: Io): Promise<ExitStatus> {
+  const prepared: Prepared[] = []
+  const objects: ReturnType<typeof calculationJson>[] = []
+  for await (const given of prepareAll(args, io)) {
+    let sheet = given
+    try {
+      if (options['json']) objects.push(calculationJson(sheet))
+      else io.out(reportText(sheet))
+    } catch (cause) {
+      sheet = failedAt(sheet, cause)
+      if (options['json']) objects.push(calculationJson(withoutCalculation(sheet)))
     }
-    if (options['json']) {
-      const all = prepared.map(calculationJson)
-      io.out(stableJson((all.length === 1 ? all[0] : all) as never))
-    }
-    reportFindings(prepared, io, options['debug'] === true)
-    return worst(prepared.map(exitStatus))
-  },
+    prepared.push(sheet)
+  }
+  const [only, ...others] = objects
+  if (only) io.out(stableJson(others.length === 0 ? only : objects))
+  reportFindings(prepared, io, options['debug'] === true)
+  return worst(prepared.map(exitStatus))
+}
+
+function withoutCalculation({ path, findings, verdict }: Prepared): Omit<Prepared, 'texts'> {
+  return { path, findings, verdict }
 }
 
 const VERDICTS = {
@@ -47,29 +46,36 @@ const VERDICTS = {
 
 const NO_CHECKS = 'calculated; there is no check'
 
+/** The sheet's name, a row for each check with the governing one marked, and the verdict in words. */
 function reportText({ path, calculation, verdict }: Prepared): string {
-  const title = calculation ? `${calculation.sheet.meta.sheet}  ${calculation.sheet.meta.title}` : path
-  const checks = calculation ? checksOf(calculation) : []
-  const profile = calculation && profileOf(calculation)
+  if (!calculation) return cleanText(`${path}\n  ${VERDICTS[verdict]}\n\n`)
+  const { meta } = calculation.sheet
+  const checks = checksOf(calculation)
+  const profile = profileOf(calculation)
   const governing = governingCheck(checks)
-  const row = (line: CheckLine): string[] => {
-    if (!profile) return []
-    const [demand, capacity] = showComparison(line.demand, line.capacity, profile)
-    const ratio = line.utilisation === undefined ? '–' : showUtilisation(line.utilisation)
-    const kind = line.validity ? 'limit of use' : ratio
-    return [
-      line === governing ? '*' : '',
-      line.title,
-      demand.text,
-      line.verdict === 'pass' ? '<=' : 'over',
-      capacity.text,
-      kind,
-      line.verdict === 'pass' ? 'OK' : 'NOT OK',
-    ]
-  }
-  const table = columns(checks.map(row))
-  const mark = governing ? '  (* governs)' : ''
-  return cleanText(
-    `${title}\n${table.map((line) => `  ${line}\n`).join('')}  ${verdict === 'pass' && checks.length === 0 ? NO_CHECKS : VERDICTS[verdict]}${mark}\n\n`,
-  )
+  const table = columns(checks.map((line) => checkRow(line, line === governing, profile)))
+  const words = verdict === 'pass' && checks.length === 0 ? NO_CHECKS : VERDICTS[verdict]
+  const lines = [...table, `${words}${governing ? '  (* governs)' : ''}`]
+  return cleanText(`${meta.sheet}  ${meta.title}\n${lines.map((line) => `  ${line}\n`).join('')}\n`)
+}
+
+function checkRow(line: CheckLine, governs: boolean, profile: Profile): string[] {
+  const [demand, capacity] = showComparison(line.demand, line.capacity, profile)
+  const utilisation = line.utilisation === undefined ? '–' : showUtilisation(line.utilisation)
+  return [
+    governs ? '*' : '',
+    line.title,
+    demand.text,
+    relationFound(line),
+    capacity.text,
+    line.validity ? 'limit of use' : utilisation,
+    line.verdict === 'pass' ? 'OK' : 'NOT OK',
+  ]
+}
+
+/** How demand and capacity do stand to each other: the relation asked for, or its opposite. */
+function relationFound({ statement, verdict }: CheckLine): string {
+  const strict = statement.relation.length === 1
+  if (verdict === 'pass') return strict ? '<' : '<='
+  return strict ? '>=' : '>'
 }

@@ -1,64 +1,52 @@
 import { allFunctions, findFunction } from '../../calculate/functions/index.ts'
-import { KINDS } from '../../quantity/kinds.ts'
+import { dimensionName, KINDS } from '../../quantity/kinds.ts'
 import { nearestName } from '../../quantity/nearest-name.ts'
 import { UNITS, unitText } from '../../quantity/units.ts'
 import { builtInIds, SheetLibrary } from '../../sheet/library.ts'
-import type { Sheet, Statement } from '../../sheet/types.ts'
 import { RULES, type RuleId } from '../../verify/rules.ts'
-import { UsageError, type Command } from '../command.ts'
+import { cleanText } from '../clean-text.ts'
 import { columns } from '../columns.ts'
+import { UsageError, type ExitStatus, type Io, type Options } from '../command.ts'
+import { methodText } from '../method-text.ts'
 import { wrap } from '../wrap.ts'
+import { methodRows } from './methods.ts'
 
-export const explain: Command = {
-  name: 'explain',
-  args: '<id>',
-  summary: 'explain a function, method, finding, unit or kind',
-  details: 'ID is the name of any of them, or `functions`, `units`, `kinds` or `findings` for a list.',
-  flags: [],
-  run([id = ''], _options, io) {
-    const text = explained(id, io.cwd)
-    if (text === undefined) {
-      const known = [
-        ...Object.keys(RULES),
-        ...allFunctions().map(({ name }) => name),
-        ...builtInIds(),
-        ...Object.keys(KINDS),
-        'functions',
-        'units',
-        'kinds',
-        'findings',
-      ]
-      const near = nearestName(id, known)
-      throw new UsageError(
-        `nothing is known by the name \`${id}\``,
-        near
-          ? `did you mean \`${near}\`?`
-          : '`stanchion explain functions`, `units`, `kinds` and `findings` list what there is',
-      )
-    }
-    io.out(text)
-    return Promise.resolve(0)
-  },
+export function run([id = '']: readonly string[], _options: Options, io: Io): Promise<ExitStatus> {
+  const text = LISTS.get(id)?.(io.cwd) ?? explained(id) ?? methodExplained(id, io.cwd)
+  if (text === undefined) throw unknown(id)
+  io.out(cleanText(text))
+  return Promise.resolve(0)
 }
 
-function explained(id: string, cwd: string): string | undefined {
+const LISTS: ReadonlyMap<string, (cwd: string) => string> = new Map<string, (cwd: string) => string>([
+  ['functions', () => list(allFunctions().map(({ signature, summary }) => [signature, summary]))],
+  ['methods', (cwd) => list(methodRows(cwd))],
+  [
+    'findings',
+    () => list(Object.entries(RULES).map(([name, { severity, title }]) => [name, severity, title])),
+  ],
+  ['kinds', () => list(Object.entries(KINDS).map(([name, { words }]) => [name, words]))],
+  ['units', () => list(Object.keys(UNITS).map((name) => [name, UNITS[name]?.words ?? '', inSi(name)]))],
+])
+
+function explained(id: string): string | undefined {
   if (Object.hasOwn(RULES, id)) return ruleText(id as RuleId)
   const fn = findFunction(id)
   if (fn)
     return `${fn.signature}\n${fn.summary}\n\n${wrap(fn.explain)}\n${fn.source ? `\n${wrap(`Source: ${fn.source}.`)}\n` : ''}`
-  if (id === 'functions') return list(allFunctions().map(({ signature, summary }) => [signature, summary]))
-  if (id === 'findings')
-    return list(Object.entries(RULES).map(([name, { severity, title }]) => [name, severity, title]))
-  if (id === 'kinds') return list(Object.entries(KINDS).map(([name, { words }]) => [name, words]))
-  if (id === 'units')
-    return list(Object.entries(UNITS).map(([name, unit]) => [name, unit.words, `in SI: ${unit.factor}`]))
   if (Object.hasOwn(UNITS, id))
-    return `${id}: ${UNITS[id]?.words}, printed ${unitText([{ unit: id, exponent: 1 }])}; one is ${UNITS[id]?.factor} in coherent SI units\n`
+    return `${id}: ${UNITS[id]?.words}, printed ${unitText([{ unit: id, exponent: 1 }])}\n${inSi(id)}\n`
   if (Object.hasOwn(KINDS, id))
-    return `${id}: ${KINDS[id as keyof typeof KINDS].words}; an input of this kind is declared as \`NAME : ${id}\`\n`
-  if (!id.includes('/')) return undefined
-  const found = new SheetLibrary().find(id, '.', cwd)
-  return 'rule' in found || !found.parsed.sheet ? undefined : methodText(found.id, found.parsed.sheet)
+    return `${id}: ${KINDS[id as keyof typeof KINDS].words}\nAn input of this kind is declared as \`NAME : ${id}\`.\n`
+  return undefined
+}
+
+/** `1 kip = 4448.2216152605 SI (force)`: the factor to coherent SI units. */
+function inSi(name: string): string {
+  const unit = UNITS[name]
+  if (!unit) return ''
+  const dimension = dimensionName(unit.dimension)
+  return `1 ${name} = ${String(unit.factor)} in SI units${dimension === '1' ? ', no dimension' : `, ${dimension}`}`
 }
 
 function ruleText(id: RuleId): string {
@@ -66,43 +54,42 @@ function ruleText(id: RuleId): string {
   return `${id} (${severity})\n${title}\n\n${wrap(text)}\n`
 }
 
-function methodText(id: string, { meta, blocks }: Sheet): string {
-  const statements = blocks.flatMap((block): readonly Statement[] =>
-    block.kind === 'given' || block.kind === 'working' ? block.statements : [],
-  )
-  const inputs = blocks.flatMap((block) =>
-    block.kind === 'given'
-      ? block.statements.map((s) => [
-          s.name,
-          s.kind === 'caller-input' ? s.inputKind : `${s.expression.text} unless bound`,
-          s.meaning ?? '',
-        ])
-      : [],
-  )
-  const returns = (meta.returns ?? []).map((name) => [
-    name,
-    statements.find((s) => 'name' in s && s.name === name)?.meaning ?? '',
-  ])
-  const limits = blocks.flatMap((block) =>
-    block.kind === 'check' && block.validity
-      ? block.statements.map((s) => [s.text, s.meaning ?? '', s.reference ?? ''])
-      : [],
-  )
-  const cases = (meta.published ?? []).map(({ title, source, origin }) => [title ?? '', source, origin ?? ''])
-  return [
-    `${id}\n${meta.title}\n${[meta.source, meta.clause].filter(Boolean).join(', ')}\n`,
-    `Inputs\n${list(inputs, '  ')}`,
-    `Results\n${list(returns, '  ')}`,
-    `Limits of use\n${list(limits, '  ')}`,
-    `Published check values: ${cases.length}\n${list(cases, '  ')}`,
-    meta.unverified ? `Not verified\n${wrap(meta.unverified, '  ')}\n` : '',
-  ]
-    .filter((part) => part !== '')
-    .join('\n')
+/** Stands for a sheet in the folder where the command is called, from which paths are taken. */
+const HERE = 'sheet.md'
+
+/** A built-in method, or a sheet of one's own by its path. */
+function methodExplained(id: string, cwd: string): string | undefined {
+  if (!id.includes('/') && !id.endsWith('.md')) return undefined
+  const found = new SheetLibrary().find(id, HERE, cwd)
+  if ('rule' in found) {
+    if (found.rule === 'method-unknown') return undefined
+    throw new UsageError(found.message, found.hint)
+  }
+  if (!found.parsed.sheet)
+    throw new UsageError(`\`${id}\` has no usable front matter`, `\`stanchion check ${id}\` says why`)
+  return methodText(found.id, found.parsed.sheet)
 }
 
-function list(rows: readonly (readonly string[])[], indent = ''): string {
+function unknown(id: string): UsageError {
+  const known = [
+    ...LISTS.keys(),
+    ...Object.keys(RULES),
+    ...allFunctions().map(({ name }) => name),
+    ...builtInIds(),
+    ...Object.keys(KINDS),
+    ...Object.keys(UNITS),
+  ]
+  const near = nearestName(id, known)
+  return new UsageError(
+    `nothing is known by the name \`${id}\``,
+    near
+      ? `did you mean \`${near}\`?`
+      : '`stanchion explain functions`, `methods`, `units`, `kinds` and `findings` list what there is',
+  )
+}
+
+function list(rows: readonly (readonly string[])[]): string {
   return columns(rows)
-    .map((row) => `${indent}${row}\n`)
+    .map((row) => `${row}\n`)
     .join('')
 }

@@ -1,57 +1,39 @@
-import { basename, dirname, join, resolve } from 'node:path'
-import type { VFileMessage } from 'vfile-message'
-import type { Calculation } from '../../calculate/types.ts'
+import { basename } from 'node:path'
+import type { HtmlDocument } from '../../html-document.ts'
 import type { Prepared } from '../../pipeline.ts'
-import { PublishProblem } from '../../publish/publish-problem.ts'
 import type { PdfJob } from '../../publish/print-pdf.ts'
-import { writeAtomic } from '../../publish/write-atomic.ts'
-import { digestOf } from '../../record/digest.ts'
-import { programVersion } from '../../version.ts'
-import type { Command, ExitStatus, Io, Options } from '../command.ts'
-import { UsageError } from '../command.ts'
-import { exitStatus, prepareAll, reportFindings, STDIN, worst } from '../sheets.ts'
-
-export const print: Command = {
-  name: 'print',
-  args: '<sheet...>',
-  summary: 'write each sheet as a self-contained HTML document, and as PDF',
-  details:
-    'The document is written beside the sheet, or under the folder that `-o` names. A sheet that cannot be calculated is not written. `-` reads a sheet from standard input and needs `-o`.',
-  flags: [
-    { flags: '--pdf', summary: 'write the PDF too (needs Chromium, Chrome or Edge)' },
-    { flags: '-o, --output <dir>', summary: 'folder to write to; made when it does not exist' },
-    { flags: '--paper <size>', summary: 'A4 or Letter, in place of what the sheet says' },
-    {
-      flags: '--browser <path>',
-      summary: 'the browser to print with; otherwise STANCHION_BROWSER, then the usual places',
-    },
-  ],
-  async run(args, options, io) {
-    const paper = paperOf(options)
-    const taken = new Map<string, string>()
-    for (const path of args) claimOutput(path, options, io, taken)
-    const prepared: Prepared[] = []
-    const jobs: Job[] = []
-    const statuses: ExitStatus[] = []
-    for await (const sheet of prepareAll(args, io)) {
-      prepared.push(sheet)
-      statuses.push(exitStatus(sheet))
-      if (!sheet.calculation || sheet.verdict === 'error') continue
-      const written = await writeHtml(sheet, sheet.calculation, options, io, paper, jobs)
-      statuses.push(written.status)
-      // What could not be set as its author meant it is known only now.
-      prepared[prepared.length - 1] = { ...sheet, findings: [...sheet.findings, ...written.met] }
-    }
-    if (options['pdf']) statuses.push(await writePdf(jobs, options, io))
-    reportFindings(prepared, io, options['debug'] === true)
-    const unwritten = prepared.filter(({ verdict }) => verdict === 'error')
-    for (const { path } of unwritten) io.err(`${path}: not written, since it could not be calculated\n`)
-    return worst(statuses)
-  },
-}
+import { PublishProblem } from '../../publish/publish-problem.ts'
+import { UsageError, type ExitStatus, type Io, type Options } from '../command.ts'
+import { failedAt } from '../internal-error.ts'
+import { claimOutputs, outputsOf, sayProblem, type Outputs } from '../outputs.ts'
+import { exitStatus, prepareAll, reportFindings, worst } from '../sheets.ts'
 
 interface Job extends PdfJob {
   readonly path: string
+}
+
+export async function run(args: readonly string[], options: Options, io: Io): Promise<ExitStatus> {
+  const paper = paperOf(options)
+  if (options['browser'] !== undefined && !options['pdf'])
+    throw new UsageError('`--browser` is given, and no PDF is asked for', 'add `--pdf`')
+  claimOutputs(args, options, io)
+  const prepared: Prepared[] = []
+  const jobs: Job[] = []
+  const statuses: ExitStatus[] = []
+  const outputs = outputsOf(options, io)
+  for await (const sheet of prepareAll(args, io)) {
+    const made = await documentOf(sheet, paper, options['pdf'] === true)
+    prepared.push(made.sheet)
+    statuses.push(exitStatus(made.sheet))
+    if (!made.document) continue
+    const isWritten = outputs.write(sheet.path, 'html', made.document.html)
+    statuses.push(isWritten ? 0 : 2)
+    if (isWritten && made.job) jobs.push(made.job)
+  }
+  if (jobs.length > 0) statuses.push(await writePdfs(jobs, options, outputs, io))
+  reportFindings(prepared, io, options['debug'] === true)
+  for (const sheet of prepared) sayWhatIsOld(sheet, outputs, io)
+  return worst(statuses)
 }
 
 function paperOf(options: Options): 'A4' | 'Letter' | undefined {
@@ -60,110 +42,65 @@ function paperOf(options: Options): 'A4' | 'Letter' | undefined {
   throw new UsageError(`\`--paper ${String(paper)}\` is not a size that is known`, 'use A4 or Letter')
 }
 
-function outputPath(path: string, extension: string, options: Options, io: Io): string {
-  const { output } = options
-  const name = `${path === '-' || path === STDIN ? 'sheet' : basename(path).replace(/\.(md|markdown)$/i, '')}.${extension}`
-  const folder = typeof output === 'string' ? resolve(io.cwd, output) : dirname(resolve(io.cwd, path))
-  return join(folder, name)
+interface Made {
+  readonly sheet: Prepared
+  readonly document?: HtmlDocument
+  readonly job?: Job
 }
 
-/** Two sheets must not write to one file, and a sheet must not be written over. */
-function claimOutput(path: string, options: Options, io: Io, taken: Map<string, string>): void {
-  if (path === '-' && options['output'] === undefined)
-    throw new UsageError('`-` needs a folder to write to', 'add `-o DIR`')
-  const target = outputPath(path, 'html', options, io)
-  const other = taken.get(target)
-  if (other !== undefined)
-    throw new UsageError(
-      `\`${other}\` and \`${path}\` would both be written to \`${target}\``,
-      'print them in two runs, with two folders',
-    )
-  if (resolve(io.cwd, path) === target)
-    throw new UsageError(`\`${path}\` would be written over`, 'name a Markdown sheet')
-  taken.set(target, path)
-}
-
-async function writeHtml(
-  { findings, verdict, path }: Prepared,
-  calculation: Calculation,
-  options: Options,
-  io: Io,
+/** The sheet with its document, if it has one, and with what was met in making it. */
+async function documentOf(
+  sheet: Prepared,
   paper: 'A4' | 'Letter' | undefined,
-  jobs: Job[],
-): Promise<{ status: ExitStatus; met: readonly VFileMessage[] }> {
-  const [{ typeset }, { htmlText }] = await Promise.all([
-    import('../../typeset/typeset.ts'),
-    import('../../publish/html-text.ts'),
-  ])
-  const digest = digestOf(calculation)
-  const version = programVersion()
-  const page = (forPdf: boolean) =>
-    typeset(calculation, {
-      findings,
-      verdict,
-      digest,
-      programVersion: version,
-      forPdf,
-      ...(paper ? { paper } : {}),
-    })
-  const tree = page(false)
-  const met = tree.data?.findings ?? []
-  const target = outputPath(path, 'html', options, io)
+  withPdf: boolean,
+): Promise<Made> {
+  if (!sheet.calculation || sheet.verdict === 'error') return { sheet }
+  const { htmlDocument, pdfJob } = await import('../../html-document.ts')
   try {
-    writeAtomic(target, htmlText(tree), { createFolder: options['output'] !== undefined })
-  } catch (error) {
-    return { status: problem(error, path, io), met }
+    const document = htmlDocument(sheet, { paper })
+    return {
+      sheet: { ...sheet, findings: [...sheet.findings, ...document.findings] },
+      document,
+      ...(withPdf ? { job: { path: sheet.path, ...pdfJob(sheet, { paper }) } } : {}),
+    }
+  } catch (cause) {
+    return { sheet: failedAt(sheet, cause) }
   }
-  io.out(`${target}\n`)
-  if (options['pdf']) {
-    const { meta } = calculation.sheet
-    jobs.push({
-      path,
-      html: htmlText(page(true)),
-      metadata: {
-        title: `${meta.sheet} ${meta.title}`,
-        language: meta.language ?? 'en',
-        subject: meta.project,
-        author: meta.originator?.name,
-        date: meta.date ?? meta.originator?.date,
-        keywords: [digest],
-        creator: `Stanchion ${version}`,
-      },
-    })
-  }
-  return { status: 0, met }
 }
 
-async function writePdf(jobs: readonly Job[], options: Options, io: Io): Promise<ExitStatus> {
-  if (jobs.length === 0) return 0
+async function writePdfs(
+  jobs: readonly Job[],
+  options: Options,
+  outputs: Outputs,
+  io: Io,
+): Promise<ExitStatus> {
   const { printPdf } = await import('../../publish/print-pdf.ts')
-  const statuses: ExitStatus[] = []
+  const browser = typeof options['browser'] === 'string' ? options['browser'] : undefined
   const notes = new Set<string>()
+  let done = 0
   try {
-    for await (const result of printPdf(jobs, { browser: options['browser'] as string | undefined })) {
+    for await (const result of printPdf(jobs, { browser })) {
       const { path } = result.job
       if ('problem' in result) {
-        statuses.push(problem(result.problem, path, io))
+        sayProblem(result.problem, path, io)
         continue
       }
       for (const note of result.notes) notes.add(note)
-      const target = outputPath(path, 'pdf', options, io)
-      try {
-        writeAtomic(target, result.pdf, { createFolder: options['output'] !== undefined })
-        io.out(`${target}\n`)
-      } catch (error) {
-        statuses.push(problem(error, path, io))
-      }
+      if (outputs.write(path, 'pdf', result.pdf)) done++
     }
   } catch (error) {
-    statuses.push(problem(error, jobs[0]?.path ?? '', io))
+    if (!(error instanceof PublishProblem)) throw error
+    sayProblem(error, jobs[0]?.path ?? '', io)
   }
   for (const note of notes) io.err(`note: ${note}\n`)
-  return worst(statuses)
+  return done === jobs.length ? 0 : 2
 }
 
-function problem(error: unknown, path: string, io: Io): ExitStatus {
-  if (!(error instanceof PublishProblem)) throw error
-  io.err(`${path}: error: ${error.message}  ${error.rule}\nhint: ${error.hint}\n`)
-  return 2
+/** A document of an earlier state of the sheet could be taken for the present one. */
+function sayWhatIsOld({ path, verdict }: Prepared, outputs: Outputs, io: Io): void {
+  const old = outputs.notWrittenNow(path).map((target) => `\`${basename(target)}\``)
+  const earlier = old.length === 0 ? '' : `${old.join(' and ')} there may show an earlier state of the sheet`
+  if (verdict === 'error')
+    io.err(`${path}: not written, since it could not be calculated${earlier && `; ${earlier}`}\n`)
+  else if (earlier) io.err(`${path}: ${earlier}; \`--pdf\` writes both\n`)
 }

@@ -1,0 +1,2 @@
+export function bundleSource(source: string): Promise<string>
+export function importSource(source: string): Promise<unknown>
