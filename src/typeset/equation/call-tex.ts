@@ -82,6 +82,7 @@ function root(name: string, body: Formula, index: Formula | undefined, printing:
 
 function matrixPower(body: Formula, power: string, printing: Printing): Print {
   const inner = printing.print(body, printing)
-  const base = inner.level === LEVEL.atom && !inner.signed ? inner : bracketed(inner)
+  const isClosed = inner.look === 'symbol' || inner.look === 'bracket' || inner.look === 'matrix'
+  const base = inner.level === LEVEL.atom && isClosed ? inner : bracketed(inner)
   return atom(`${base.tex}^{${power}}`, 'other', { level: LEVEL.power, ...(base.tall ? { tall: true } : {}) })
 }

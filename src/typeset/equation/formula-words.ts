@@ -232,17 +232,16 @@ function spokenCall(call: Extract<Formula, { type: 'call' }>, saying: Speaking):
   const speaking = { ...saying, angles: anglesIn(call) }
   const lookup = call.name === 'lookup' ? tableOf(call) : undefined
   if (lookup) return spokenLookup(lookup, speaking)
-  const args = call.args.map((arg) => {
+  const args = call.args.map((arg): Spoken => {
     const body = withoutGroup(arg)
-    return body.type === 'record' ? fieldsWords(body, speaking) : formulaWords(body, speaking)
+    return body.type === 'record'
+      ? { text: fieldsWords(body, speaking), level: LEVEL.case }
+      : spoken(body, speaking)
   })
   const name = CALLS.get(call.name) ?? call.name.replaceAll('_', ' ')
-  const end = call.args.length === 1 && isShort(call.args[0], speaking) ? '' : `, end of ${name}`
-  return { text: `the ${name} of ${args.join(' and ')}${end}`, level: LEVEL.power }
-}
-
-function isShort(formula: Formula | undefined, speaking: Speaking): boolean {
-  return formula !== undefined && spoken(withoutGroup(formula), speaking).level === LEVEL.atom
+  const isShort = args.length === 1 && args[0]?.level === LEVEL.atom
+  const text = `the ${name} of ${args.map((arg) => arg.text).join(' and ')}`
+  return { text: isShort ? text : `${text}, end of ${name}`, level: LEVEL.power }
 }
 
 function spokenLookup({ key, table }: NonNullable<ReturnType<typeof tableOf>>, speaking: Speaking): Spoken {

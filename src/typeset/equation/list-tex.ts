@@ -34,9 +34,10 @@ export function printList({ items }: Extract<Formula, { type: 'list' }>, printin
   if (first && first.length > 0 && rows.every((row) => row?.length === first.length)) {
     const inner = { ...printing, inline: true }
     const cells = rows.map((row) => (row ?? []).map((cell) => printing.print(withoutGroup(cell), inner).tex))
-    return atom(matrixTex(cells), 'other', { tall: true })
+    return atom(matrixTex(cells), 'matrix', { tall: true })
   }
-  return bracketed(printArguments(items, printing), '[', ']')
+  // A plain `[` at the start of a row of a matrix would be read as the row's distance.
+  return bracketed(printArguments(items, printing), '\\lbrack ', '\\rbrack ')
 }
 
 /** `{L: 4.6 m, top: "pinned"}` as its fields in braces; a field whose value is the name it has is written once. */

@@ -21,18 +21,22 @@ export function printRelation(
   printing: Printing,
   holds = true,
 ): Print {
-  const shown = operands.map((side) => printing.print(side, printing))
-  const degrees = shown.filter(({ tex }) => tex.endsWith('\\circ}')).length
-  const setting =
-    degrees === 0 || degrees === shown.length ? printing : { ...printing, angles: 'radians' as const }
-  const pieces = operands.map((side, i) => {
-    const print = operand(printing.print(side, setting), LEVEL.sum, true)
+  const pieces = sidesOf(operands, printing).map((side, i) => {
+    const print = operand(side, LEVEL.sum, true)
     const operator = operators[i - 1]
     if (operator === undefined) return print
     const sign = relationTex(operator, holds)
     return led(print, sign, `{}${sign}`)
   })
   return row(pieces, LEVEL.relation)
+}
+
+/** The sides of a relation; angles beside plain numbers are all put in in radians. */
+function sidesOf(operands: readonly Formula[], printing: Printing): readonly Print[] {
+  const sides = operands.map((side) => printing.print(side, printing))
+  const degrees = sides.filter(({ tex }) => tex.endsWith('\\circ}')).length
+  if (degrees === 0 || degrees === sides.length) return sides
+  return operands.map((side) => printing.print(side, { ...printing, angles: 'radians' }))
 }
 
 /** `a and b and c`, in words. */

@@ -46,6 +46,8 @@ const DELIMITERS = new Set([
   'lfloor',
   'rfloor',
   'lceil',
+  'lbrack',
+  'rbrack',
   'rceil',
   '{',
   '}',
@@ -153,7 +155,7 @@ class Meter {
     if (space !== undefined) return space * scale
     const delimiter = DELIMITER_SIZES.get(name)
     if (delimiter !== undefined) return this.delimited(name, delimiter, scale)
-    if (DELIMITERS.has(name)) return (/^[lr][vV]/.test(name) ? 0.28 : 0.5) * scale
+    if (DELIMITERS.has(name)) return (/^[lr][vVb]/.test(name) ? 0.28 : 0.5) * scale
     switch (name) {
       case 'frac':
         return Math.max(this.group(scale, face), this.group(scale, face)) + 0.24

@@ -1,4 +1,5 @@
 import type { Formula } from '../../calculate/types.ts'
+import { isDimensionless } from '../../quantity/dimension.ts'
 import { meantBy } from './operand.ts'
 import { atom, bracketed, LEVEL, type Look, type Print, type Printing } from './print.ts'
 import { isPutIn, showPutIn } from './put-in.ts'
@@ -35,7 +36,12 @@ function numberPutIn(formula: Formula, { operands, profile, angles }: Printing):
   if (meant === undefined || !isPutIn(meant.value)) return undefined
   const { value } = meant
   if (value.type === 'quantity') return shownPrint(showPutIn(meant, value, profile, angles))
-  return atom(valueTex(value, profile, meant), 'other', value.type === 'array' ? { tall: true } : {})
+  const isMatrix = value.type === 'array' && isDimensionless(value.dimension)
+  return atom(
+    valueTex(value, profile, meant),
+    isMatrix ? 'matrix' : 'other',
+    value.type === 'array' ? { tall: true } : {},
+  )
 }
 
 function printSymbol(

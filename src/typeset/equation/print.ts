@@ -7,7 +7,7 @@ export const LEVEL = { case: 0, or: 1, and: 2, relation: 3, sum: 4, product: 5, 
 
 /** What a factor looks like at its ends, which decides the sign of multiplication beside it. */
 export type Look =
-  'number' | 'quantity' | 'symbol' | 'word' | 'bracket' | 'call' | 'root' | 'fraction' | 'other'
+  'number' | 'quantity' | 'symbol' | 'word' | 'bracket' | 'call' | 'root' | 'fraction' | 'matrix' | 'other'
 
 /** A piece of printed mathematics. */
 export interface Print {

@@ -16,6 +16,7 @@ export interface RenderOptions {
 
 /** No size in a formula is larger than this, in em. */
 const MAX_SIZE = 30
+/** In prose, where an author may define macros. Equations made here define none, and a long one expands some thousands. */
 const MAX_EXPANSIONS = 1000
 
 function settings(display: boolean, forPdf: boolean): KatexOptions {
@@ -27,7 +28,7 @@ function settings(display: boolean, forPdf: boolean): KatexOptions {
     strict: 'ignore',
     macros: {},
     maxSize: MAX_SIZE,
-    maxExpand: MAX_EXPANSIONS,
+    maxExpand: Infinity,
   }
 }
 
@@ -52,6 +53,7 @@ export function renderProseMath(tex: string, display: boolean, forPdf = false): 
   try {
     const markup = katex.renderToString(tex, {
       ...settings(display, forPdf),
+      maxExpand: MAX_EXPANSIONS,
       trust: ({ command }) => {
         refused.push(command)
         return false

@@ -33,7 +33,9 @@ describe('a line is symbols = numbers put in = result', () => {
     expect(printed(LENGTHS, 'x = -(5 kN)').tex).toBe('x=-5\\,\\mathrm{kN}')
     expect(printed(LENGTHS, 'x = L').tex).toBe('x=L=4.60\\,\\mathrm{m}')
     expect(printed(LENGTHS, 'x = 1/200').tex).toBe('x=\\frac{1}{200}=0.005')
-    expect(printed(LENGTHS, 'x = [a, b]').tex).toBe('x=[a,\\;b]=[3\\,\\mathrm{m},\\;-2\\,\\mathrm{m}]')
+    expect(printed(LENGTHS, 'x = [a, b]').tex).toBe(
+      'x=\\lbrack a,\\;b\\rbrack =\\lbrack 3\\,\\mathrm{m},\\;-2\\,\\mathrm{m}\\rbrack ',
+    )
     expect(printed(LENGTHS, 'x = "plain"').tex).toBe('x=\\text{“plain”}')
     expect(printed('s = section("HE 160 B")', 'A = s.A').tex).toBe(
       'A=A_{\\textit{s}}=5\\,430\\,\\mathrm{mm}^{2}',
