@@ -80,14 +80,17 @@ function partsOf(line: NamedLine, profile: Profile): EquationParts {
   const substituted = closed(printing.print(line.formula, numbers))
   const saysSame = substituted.tex === symbolic.tex
   const isSpelledOut = !line.unit && isSpelled(line.formula, line)
-  const isAlias = !line.unit && meantBy(withoutGroup(line.formula), line.operands) !== undefined
-  const before = saysSame ? symbolic : substituted
+  const meant = meantBy(withoutGroup(line.formula), line.operands)
+  const isAlias = !line.unit && meant !== undefined
+  // A rounded value of the other name before the same value in another unit would only disagree with it in the last figure.
+  const isConverted = line.unit !== undefined && meant !== undefined && !meant.asTyped
+  const before = saysSame || isConverted ? symbolic : substituted
   // What a model is made from says all, unless numbers were put in: then its description tells how they were understood.
   const isTold = line.value.type === 'model' && saysSame && line.formula.type === 'call'
   const because = becauseOf(line, numbers)
   return {
     symbolic,
-    ...(saysSame ? {} : { substituted }),
+    ...(saysSame || isConverted ? {} : { substituted }),
     ...(before.tex === result.tex || (isAlias && !saysSame) || isTold || isSpelledOut ? {} : { result }),
     ...(because ? { because } : {}),
   }

@@ -27,6 +27,10 @@ describe('a line is symbols = numbers put in = result', () => {
     expect(printed('L = 4.60 m', 'x = L to mm').tex).toBe('x=L=4.60\\,\\mathrm{m}=4\\,600\\,\\mathrm{mm}')
   })
 
+  test('a rounded value does not stand before its own conversion', () => {
+    expect(printed('L = 4.60 m', 'x = L/3\ny = x to mm').tex).toBe('y=x=1\\,533\\,\\mathrm{mm}')
+  })
+
   test('nothing is said twice', () => {
     expect(printed(LENGTHS, 'x = 5 kN').tex).toBe('x=5\\,\\mathrm{kN}')
     expect(printed(LENGTHS, 'x = (5 kN)').tex).toBe('x=5\\,\\mathrm{kN}')
