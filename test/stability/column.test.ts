@@ -3,6 +3,7 @@ import fc from 'fast-check'
 import { describe, expect, test } from 'vitest'
 import { columnCriticalLoad, columnEffectiveLength } from '../../src/stability/column/column.ts'
 import { END_CONDITIONS, type Column, type End, type Restraint } from '../../src/stability/column/ends.ts'
+import { columnModeShape } from '../../src/stability/column/mode-shape.ts'
 import { countBelow } from '../../src/stability/column/exact.ts'
 import { eulerLoad } from '../../src/stability/euler.ts'
 import { StabilityError } from '../../src/stability/result.ts'
@@ -81,31 +82,88 @@ describe('uniform columns against published values', () => {
   test('every published case of the file is calculated', () => expect(published.length).toBeGreaterThan(30))
 })
 
-describe('columns against transcendental equations solved by mpmath', () => {
-  interface Recomputed {
-    springs: {
-      base_rotation: string
-      base_translation: string
-      top_rotation: string
-      top_translation: string
-      n: number
-      load: number
-    }[]
-  }
-  const { springs } = read('stability-recomputed.json') as Recomputed
-  const restraint = (text: string): Restraint => (text === 'fixed' || text === 'free' ? text : Number(text))
+interface Solved {
+  base_rotation: string
+  base_translation: string
+  top_rotation: string
+  top_translation: string
+  n: number
+  load: number
+  mode?: number[]
+}
+const recomputed = read('stability-recomputed.json') as {
+  springs: Solved[]
+  extremes: Solved[]
+  high: { ends: string; n: number; load: number }[]
+}
+const restraint = (text: string): Restraint => (text === 'fixed' || text === 'free' ? text : Number(text))
+const columnOf = (s: Solved): Column =>
+  unit(
+    { rotation: restraint(s.base_rotation), translation: restraint(s.base_translation) },
+    { rotation: restraint(s.top_rotation), translation: restraint(s.top_translation) },
+  )
 
-  test('random end springs over ten orders of magnitude, modes 1 to 4, to 1e-9', () => {
-    expect(springs.length).toBeGreaterThan(100)
-    let worst = 0
-    for (const s of springs) {
-      const column = unit(
-        { rotation: restraint(s.base_rotation), translation: restraint(s.base_translation) },
-        { rotation: restraint(s.top_rotation), translation: restraint(s.top_translation) },
-      )
-      worst = Math.max(worst, Math.abs(columnCriticalLoad(column, s.n).value / s.load - 1))
+describe('columns against transcendental equations solved by mpmath', () => {
+  test('random end springs over ten orders of magnitude, modes 1 to 4, to 1e-13', () => {
+    expect(recomputed.springs.length).toBeGreaterThan(100)
+    for (const s of recomputed.springs)
+      expect(Math.abs(columnCriticalLoad(columnOf(s), s.n).value / s.load - 1)).toBeLessThan(1e-13)
+  })
+
+  test('springs over twenty orders of magnitude keep all digits, by both routes', () => {
+    expect(recomputed.extremes.length).toBeGreaterThan(60)
+    for (const s of recomputed.extremes) {
+      const { value, second } = columnCriticalLoad(columnOf(s), s.n)
+      expect(Math.abs(value / s.load - 1)).toBeLessThan(1e-13)
+      expect(Math.abs(second.value / s.load - 1)).toBeLessThan(1e-10)
     }
-    expect(worst).toBeLessThan(1e-9)
+  })
+
+  test('high modes of columns with fixed ends', () => {
+    for (const { ends, n, load } of recomputed.high) {
+      const column = unit(fixed, ends === 'fixed_fixed' ? fixed : pinned)
+      expect(Math.abs(columnCriticalLoad(column, n).value / load - 1)).toBeLessThan(1e-13)
+    }
+  })
+
+  test('mode shapes at the quarter points, to 1e-12 of the largest', () => {
+    for (const s of recomputed.extremes) {
+      const { deflection } = columnModeShape(columnOf(s), s.n)
+      const at = [0, 0.25, 0.5, 0.75, 1].map(deflection)
+      const largest = Math.max(...at.map(Math.abs))
+      // The sign of a mode is free where two deflections are equally large.
+      const off = (sign: number) =>
+        Math.max(
+          ...at.map((value, i) => Math.abs(value / largest - sign * ((s.mode as number[])[i] as number))),
+        )
+      expect(Math.min(off(1), off(-1))).toBeLessThan(1e-12)
+    }
+  })
+})
+
+describe('mode shapes', () => {
+  test.each([
+    ['pinned ends', unit(pinned, pinned), 3, (s: number) => Math.sin(3 * Math.PI * s)],
+    ['a cantilever', unit(fixed, free), 1, (s: number) => 1 - Math.cos((Math.PI * s) / 2)],
+    ['fixed ends', unit(fixed, fixed), 1, (s: number) => (1 - Math.cos(2 * Math.PI * s)) / 2],
+  ] as const)('%s (Timoshenko and Gere, Art. 2.1)', (_name, column, n, exact) => {
+    const { deflection } = columnModeShape(column, n)
+    for (let i = 0; i <= 50; i++) expect(Math.abs(deflection(i / 50) - exact(i / 50))).toBeLessThan(1e-12)
+  })
+
+  test('the largest deflection is one, whatever the length', () => {
+    const { deflection } = columnModeShape({ L: 7, EI: 3e6, base: turning(1e5), top: pinned }, 2)
+    const all = Array.from({ length: 2001 }, (_, i) => deflection((7 * i) / 2000))
+    expect(Math.max(...all.map(Math.abs))).toBeCloseTo(1, 5)
+    expect(Math.max(...all)).toBeGreaterThan(0.999)
+    expect(() => deflection(7.1)).toThrow(RangeError)
+  })
+
+  test('modes that share a load have no shape of their own', () => {
+    // Translational springs alone: the sway of pinned ends, P = k L/2, meets the bow, P = π² EI/L².
+    const both = unit(swaying(2 * Math.PI ** 2), swaying(2 * Math.PI ** 2))
+    expect(columnCriticalLoad(both, 1).value / columnCriticalLoad(both, 2).value).toBeCloseTo(1, 12)
+    expect(() => columnModeShape(both)).toThrow(/2 modes share the critical load number 1/)
   })
 })
 
@@ -113,7 +171,7 @@ describe('laws of columns', () => {
   const spring: fc.Arbitrary<Restraint> = fc.oneof(
     fc.constant<Restraint>('fixed'),
     fc.constant<Restraint>('free'),
-    fc.double({ min: -4, max: 4, noNaN: true }).map((p) => 10 ** p),
+    fc.double({ min: -6, max: 6, noNaN: true }).map((p) => 10 ** p),
   )
   const end = fc.record({ rotation: spring, translation: spring })
   const held = fc.tuple(end, end).filter(([base, top]) => {

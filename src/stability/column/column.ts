@@ -1,11 +1,13 @@
 import { expectPositive, secondRoute, StabilityError, type SolverResult } from '../result.ts'
 import { expectHeld, type Column } from './ends.ts'
 import { countBelow } from './exact.ts'
-import { ritzLoads } from './ritz.ts'
+import { ritzLoad } from './ritz.ts'
 
 /** The bracket is halved until it is no wider than this, relatively. */
 const WIDTH = 4e-16
 const MAX_HALVINGS = 400
+/** The largest relative difference between the two routes that is accepted. */
+const ALLOWED = 1e-8
 /** The highest mode that is asked for in earnest; beyond it the second route would need many more terms. */
 const MAX_MODE = 20
 
@@ -30,7 +32,6 @@ export function columnCriticalLoad(column: Column, n = 1): SolverResult {
       `use a whole number from 1 to ${MAX_MODE}`,
     )
   }
-  const loads = ritzLoads(column, n)
   let [low, high] = [1e-3, 3]
   let iterations = 0
   while (countBelow(column, high) < n && iterations++ < MAX_HALVINGS) high *= 1.5
@@ -44,20 +45,14 @@ export function columnCriticalLoad(column: Column, n = 1): SolverResult {
   const load = (h: number) => (4 * h * h * EI) / (L * L)
   const value = load((low + high) / 2)
   const residual = (high - low) / high
-  if (!Number.isFinite(value) || residual > 1e-12) {
+  if (!(Number.isFinite(value) && value > 0 && residual <= 1e-12)) {
     throw new StabilityError(
       `the critical load could not be bracketed (width ${residual} after ${iterations} steps)`,
       'check the column’s data for badly scaled stiffness',
       'solver',
     )
   }
-  const [lowest = NaN, ritz = NaN] = [loads[0], loads[n - 1]]
-  const second = secondRoute(
-    'Rayleigh–Ritz with polynomials',
-    (ritz * EI) / (L * L),
-    value,
-    1e-8 + (1e-13 * ritz) / lowest,
-  )
+  const ritz = ((ritzLoad(column, n) ?? NaN) * EI) / (L * L)
   return {
     value,
     route: 'exact member, eigenvalues counted',
@@ -65,7 +60,7 @@ export function columnCriticalLoad(column: Column, n = 1): SolverResult {
     iterations,
     residual,
     bracket: [load(low), load(high)],
-    second,
+    second: secondRoute('Rayleigh–Ritz with polynomials', ritz, value, ALLOWED),
   }
 }
 

@@ -1,5 +1,6 @@
-import { eigen } from '../dense.ts'
-import { freeMotions, reduce, springStiffness, type Column } from './ends.ts'
+import { negativeCount } from '../inertia.ts'
+import type { Column } from './ends.ts'
+import { addProduct, freeMotions, springStiffness } from './motions.ts'
 
 /*
  * A column under the load P with h = (L/2)·sqrt(P/EI). The exact stiffness of the uniform member in compression is written
@@ -31,37 +32,23 @@ function phi2(h: number): number {
  */
 function negativeStiffness(column: Column, h: number): number {
   const motions = freeMotions(column)
-  const K = springStiffness(column)
-  ;(K[2] as number[])[2] = ((K[2] as number[])[2] as number) - 4 * h * h
-  const borders: { values: number[]; corner: number }[] = []
+  const part = (at: number) => motions.map((motion) => motion[at] as number)
+  const K = springStiffness(column, motions)
+  addProduct(K, -4 * h * h, part(2))
   const one = phi1(h)
-  const parts = [
-    { at: 0, value: 12 * phi2(h), inverse: (1 - one) / (4 * h * h) },
-    { at: 1, value: 4 * one, inverse: Math.tan(h) / (4 * h) },
-  ]
-  let extra = 0
-  for (const { at, value, inverse } of parts) {
-    if (Math.abs(value) <= 100) (K[at] as number[])[at] = ((K[at] as number[])[at] as number) + value
-    else {
-      borders.push({ values: motions.map((motion) => motion[at] as number), corner: -inverse })
-      if (inverse > 0) extra++
-    }
+  const borders: { row: number[]; corner: number }[] = []
+  for (const { row, value, inverse } of [
+    { row: part(0), value: 12 * phi2(h), inverse: (1 - one) / (4 * h * h) },
+    { row: part(1), value: 4 * one, inverse: Math.tan(h) / (4 * h) },
+  ]) {
+    if (Math.abs(value) <= 100) addProduct(K, value, row)
+    else borders.push({ row, corner: -inverse })
   }
-  const reduced = reduce(K, motions)
-  const rows = reduced.map((row, i) => [...row, ...borders.map(({ values }) => values[i] as number)])
-  borders.forEach(({ values, corner }, k) =>
-    rows.push([...values, ...borders.map((_, j) => (j === k ? corner : 0))]),
-  )
-  return countNegative(rows) - extra
-}
-
-/** Negative eigenvalues of a symmetric matrix, after scaling its rows and columns to a common size (which keeps their number). */
-function countNegative(matrix: readonly (readonly number[])[]): number {
-  const scale = matrix.map((row) => 1 / Math.sqrt(Math.max(...row.map(Math.abs), Number.MIN_VALUE)))
-  const scaled = matrix.map((row, i) =>
-    row.map((value, j) => value * (scale[i] as number) * (scale[j] as number)),
-  )
-  return eigen(scaled).values.filter((value) => value < 0).length
+  const bordered = [
+    ...K.map((row, i) => [...row, ...borders.map((border) => border.row[i] as number)]),
+    ...borders.map(({ row, corner }, k) => [...row, ...borders.map((_, j) => (j === k ? corner : 0))]),
+  ]
+  return negativeCount(bordered) - borders.filter(({ corner }) => corner < 0).length
 }
 
 /**

@@ -1,5 +1,6 @@
-import { generalisedEigen } from '../dense.ts'
-import { freeMotions, reduce, springStiffness, type Column } from './ends.ts'
+import { negativeCount } from '../inertia.ts'
+import type { Column } from './ends.ts'
+import { addProduct, freeMotions, springStiffness, type Motion } from './motions.ts'
 
 /*
  * An energy method that shares nothing with the exact member but the springs: the deflected shape is a polynomial, made of
@@ -45,35 +46,49 @@ function shapes(xi: number, bubbles: number): { slope: number[]; curvature: numb
   return { slope, curvature }
 }
 
-/** The n lowest critical loads as P L²/(EI), ascending; fewer when the column has fewer. Upper bounds. */
-export function ritzLoads(column: Column, n: number): number[] {
-  const bubbles = 14 + 4 * n
-  const size = bubbles + 4
-  const K = Array.from({ length: size }, () => new Array<number>(size).fill(0))
-  const G = Array.from({ length: size }, () => new Array<number>(size).fill(0))
+/**
+ * The energy of bending with the springs, and that of the end load by unit load, of the free motions followed by bubbles:
+ * dimensionless, full matrices.
+ */
+function energies(column: Column, bubbles: number): { K: number[][]; G: number[][] } {
+  const motions = freeMotions(column)
+  const size = motions.length + bubbles
+  const square = () => Array.from({ length: size }, () => new Array<number>(size).fill(0))
+  const [K, G] = [square(), square()]
   for (const { x, w } of gauss(bubbles + 4)) {
     const { slope, curvature } = shapes(x, bubbles)
-    for (let i = 0; i < size; i++) {
-      const [k, g] = [K[i] as number[], G[i] as number[]]
-      for (let j = 0; j < size; j++) {
-        k[j] = (k[j] as number) + (w / 2) * (curvature[i] as number) * (curvature[j] as number)
-        g[j] = (g[j] as number) + (w / 2) * (slope[i] as number) * (slope[j] as number)
-      }
-    }
+    addProduct(K, w / 2, seenBy(motions, curvature))
+    addProduct(G, w / 2, seenBy(motions, slope))
   }
-  springStiffness(column).forEach((row, i) =>
-    row.forEach((value, j) => ((K[i] as number[])[j] = ((K[i] as number[])[j] as number) + value)),
-  )
-  const unit = (i: number) => Array.from({ length: size }, (_, j) => (i === j ? 1 : 0))
-  const motions = [
-    ...freeMotions(column).map((motion) => [...motion, ...new Array<number>(bubbles).fill(0)]),
-    ...Array.from({ length: bubbles }, (_, j) => unit(4 + j)),
-  ]
-  const inverse = generalisedEigen(reduce(G, motions), reduce(K, motions))
-  if (!inverse) return []
-  return inverse.values
-    .filter((value) => value > 0)
-    .reverse()
-    .slice(0, n)
-    .map((value) => 1 / value)
+  for (const [i, row] of springStiffness(column, motions).entries())
+    for (const [j, value] of row.entries()) (K[i] as number[])[j] = ((K[i] as number[])[j] as number) + value
+  return { K, G }
+}
+
+/** The four end motions' values combined to the free motions, the bubbles' kept. */
+const seenBy = (motions: readonly Motion[], values: readonly number[]) => [
+  ...motions.map((motion) => motion.reduce((sum, part, i) => sum + part * (values[i] as number), 0)),
+  ...values.slice(4),
+]
+
+/** Below this relative width of its bracket a load is found. */
+const WIDTH = 1e-11
+
+/**
+ * The n-th critical load as P L²/(EI): the energy K − P G has n − 1 negative eigenvalues below it and n above. An upper
+ * bound; undefined when the column has no n-th.
+ */
+export function ritzLoad(column: Column, n: number): number | undefined {
+  const { K, G } = energies(column, 14 + 2 * n)
+  const below = (load: number) =>
+    negativeCount(K.map((row, i) => row.map((value, j) => value - load * ((G[i] as number[])[j] as number))))
+  let [low, high] = [1, 1]
+  for (let i = 0; below(low) >= n; i++, low /= 16) if (i > 200) return undefined
+  for (let i = 0; below(high) < n; i++, high *= 2) if (i > 200) return undefined
+  for (let i = 0; (high - low) / high > WIDTH && i < 200; i++) {
+    const middle = low > high / 4 ? (low + high) / 2 : Math.sqrt(low) * Math.sqrt(high)
+    if (below(middle) >= n) high = middle
+    else low = middle
+  }
+  return (low + high) / 2
 }
