@@ -30,6 +30,24 @@ export function branchesOf(
   return { branches, ...(index === undefined ? {} : { taken: index }) }
 }
 
+/** A comparison on the way to the branch taken. */
+export interface Reason {
+  readonly condition: Extract<Formula, { type: 'relation' }>
+  readonly holds: boolean
+}
+
+/** Why a line took its branch: the comparisons up to the one that holds; those of more than two sides are left to the reader. */
+export function reasonsOf(formula: Formula, known: ReadonlyMap<Formula, boolean>): readonly Reason[] {
+  const distinction = withoutGroup(formula)
+  if (distinction.type !== 'case') return []
+  const { branches, taken } = branchesOf(distinction, known)
+  if (taken === undefined) return []
+  return branches.slice(0, taken + 1).flatMap(({ condition }, i) => {
+    const isSimple = condition?.type === 'relation' && condition.operators.length === 1
+    return isSimple ? [{ condition, holds: i === taken }] : []
+  })
+}
+
 /** The rows of a case distinction under one brace, the one taken marked; with numbers put in, only the one taken. */
 export function printCase(formula: Case, printing: Printing): Print {
   const { branches, taken } = branchesOf(formula, printing.branches)

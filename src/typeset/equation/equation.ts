@@ -1,6 +1,6 @@
 import type { Formula, NamedLine, Value } from '../../calculate/types.ts'
 import type { Profile } from '../../quantity/profile.ts'
-import { branchesOf } from './case-tex.ts'
+import { reasonsOf } from './case-tex.ts'
 import { printingOf } from './formula-tex.ts'
 import { layChain, type Link } from './layout.ts'
 import { printRelation } from './logic-tex.ts'
@@ -141,14 +141,9 @@ function splitText(text: string): Print {
   return atom(textTex(text), 'other', pieces.length > 1 ? { split: () => pieces } : {})
 }
 
-function becauseOf({ formula, branches }: NamedLine, numbers: Printing): Print | undefined {
-  const distinction = withoutGroup(formula)
-  if (distinction.type !== 'case') return undefined
-  const { branches: rows, taken } = branchesOf(distinction, branches)
-  if (taken === undefined) return undefined
-  const reasons = rows.slice(0, taken + 1).flatMap(({ condition }, i) => {
-    if (condition?.type !== 'relation' || condition.operators.length > 1) return []
-    return [printRelation(condition, { ...numbers, inline: true }, i === taken).tex]
+function becauseOf(line: NamedLine, numbers: Printing): Print | undefined {
+  const reasons = reasonsOf(line.formula, line.branches).map(({ condition, holds }) => {
+    return printRelation(condition, { ...numbers, inline: true }, holds).tex
   })
   return reasons.length === 0 ? undefined : atom(`\\quad\\text{as }${reasons.join(',\\;')}`, 'other')
 }

@@ -1,4 +1,18 @@
-import { GREEK_CAPITAL, GREEK_SMALL, IDEOGRAPH, ITALIC, MARKS, OTHER, UPRIGHT } from './glyph-widths.ts'
+import { MARKS } from './glyph-widths.ts'
+import {
+  BINARY,
+  BOLD,
+  DELIMITERS,
+  DELIMITER_SIZES,
+  ENDS,
+  ENVIRONMENTS,
+  glyphWidth,
+  namedWidth,
+  RELATIONS,
+  SCRIPT,
+  SPACES,
+  type Face,
+} from './tex-widths.ts'
 
 /**
  * The width of a formula in display style, in em of the mathematics: an estimate from the widths of its letters and TeX's
@@ -8,58 +22,6 @@ import { GREEK_CAPITAL, GREEK_SMALL, IDEOGRAPH, ITALIC, MARKS, OTHER, UPRIGHT } 
 export function measure(tex: string): number {
   return new Meter(tex).list(1, 'italic')
 }
-
-type Face = 'italic' | 'upright'
-
-/** Each script is this much smaller than what it stands at. */
-const SCRIPT = 0.7
-/** Bold figures are this much wider. */
-const BOLD = 1.15
-const SPACES: ReadonlyMap<string, number> = new Map([
-  [',', 0.17],
-  [';', 0.28],
-  [' ', 0.25],
-  ['quad', 1],
-  ['qquad', 2],
-])
-const RELATIONS = new Set(['leq', 'geq', 'neq', 'nleq', 'ngeq', 'nless', 'ngtr', '=', '<', '>'])
-const BINARY = new Map([
-  ['times', 0.78],
-  ['cdot', 0.28],
-  ['+', 0.78],
-  ['-', 0.78],
-])
-const DELIMITER_SIZES = new Map([
-  ['left', 0.62],
-  ['right', 0.62],
-  ['bigl', 0.46],
-  ['bigr', 0.46],
-  ['Bigl', 0.6],
-  ['Bigr', 0.6],
-  ['big', 0.58],
-])
-const DELIMITERS = new Set([
-  'lvert',
-  'rvert',
-  'lVert',
-  'rVert',
-  'lfloor',
-  'rfloor',
-  'lceil',
-  'lbrack',
-  'rbrack',
-  'rceil',
-  '{',
-  '}',
-])
-const ENDS = new Set(['end', 'right', '\\'])
-/** What stands around and between the columns. */
-const ENVIRONMENTS: ReadonlyMap<string, { readonly around: number; readonly between: number }> = new Map([
-  ['dcases', { around: 1.4, between: 1 }],
-  ['pmatrix', { around: 1.6, between: 1 }],
-  ['array', { around: 1, between: 1 }],
-  ['aligned', { around: 0, between: 0 }],
-])
 
 class Meter {
   private at = 0
@@ -233,20 +195,4 @@ class Meter {
     this.at += count
     while (!this.inText && this.tex[this.at] === ' ') this.at++
   }
-}
-
-function glyphWidth(character: string, face: Face): number {
-  const letter = (face === 'italic' ? ITALIC : UPRIGHT).get(character) ?? MARKS.get(character)
-  if (letter !== undefined) return letter
-  return character >= '\u3000' ? IDEOGRAPH : OTHER
-}
-
-function namedWidth(name: string): number {
-  if (name === 'hline') return 0
-  if (name === 'pi' || name.startsWith('var')) return GREEK_SMALL
-  if (/^(?:sin|cos|tan|cot|exp|min|max|det|ln|log|arc|sinh|cosh|tanh)/.test(name))
-    return name.length * 0.5 + 0.17
-  if (/^text/.test(name) || name.length === 1) return 0.5
-  if (name === 'triangle' || name === 'ldots' || name === 'cdots') return 1.2
-  return /^[A-Z]/.test(name) ? GREEK_CAPITAL : GREEK_SMALL
 }

@@ -187,6 +187,11 @@ describe('words', () => {
       'x = a - b',
       'x equals a minus b equals 3 metres minus open bracket minus 2 metres close bracket equals 5 metres',
     ],
+    [
+      'x = a < b or a > b and b < L',
+      'x equals a is less than b or open bracket a is greater than b and b is less than L close bracket',
+    ],
+    ['x = a < b ? a : L', 'end of cases equals 4.60 metres, as 3 metres is not less than minus 2 metres'],
     ['x = sqrt(a*L)', 'x equals the square root of a times L, end of square root equals'],
   ])('%s', (line, words) => expect(printed(LENGTHS, line).words).toContain(words))
 })
