@@ -17,6 +17,7 @@ import type { SheetVerdict } from '../verify/verdict.ts'
 import { digestOf } from './digest.ts'
 import { profileOf } from './profile-of.ts'
 import type { Json } from './stable-json.ts'
+import { valueText } from './value-text.ts'
 
 export const CALCULATION_SCHEMA = 'stanchion/calculation/1'
 
@@ -90,6 +91,8 @@ function valueJson({ value, unit }: NamedLine, profile: Profile): JsonObject {
       const shown = show(value, profile, unit ? { unit } : {})
       return { ...plain(value), unit: shown.unitText, shown: shown.text }
     }
+    case 'array':
+      return { ...plain(value), shown: valueText(value, profile, unit) }
     default:
       return plain(value)
   }

@@ -1,8 +1,9 @@
-import type { Calculation, NamedLine, Value } from '../calculate/types.ts'
+import type { Calculation, NamedLine } from '../calculate/types.ts'
 import type { Profile } from '../quantity/profile.ts'
 import { showComparison } from '../quantity/show-comparison.ts'
-import { show, showUtilisation } from '../quantity/show.ts'
+import { showUtilisation } from '../quantity/show.ts'
 import { profileOf } from './profile-of.ts'
+import { valueText } from './value-text.ts'
 
 /**
  * One line a value and a check, in the order of the document, the names of used sheets as `minor.chi`: what version
@@ -30,27 +31,4 @@ function lines(calculation: Calculation, prefix: string, profile: Profile): stri
 function namedText({ name, value, unit, statement }: NamedLine, prefix: string, profile: Profile): string {
   const meaning = statement.meaning === undefined ? '' : `  # ${statement.meaning}`
   return `${prefix}${name} = ${valueText(value, profile, unit)}${meaning}`
-}
-
-function valueText(value: Value, profile: Profile, unit?: NamedLine['unit']): string {
-  switch (value.type) {
-    case 'quantity':
-      return show(value, profile, unit ? { unit } : {}).text
-    case 'array':
-      return `[${value.si
-        .flat()
-        .map((si) => show({ si, dimension: value.dimension }, profile).text)
-        .join(', ')}]`
-    case 'text':
-    case 'truth':
-      return String(value.value)
-    case 'record':
-      return value.title
-    case 'list':
-      return value.items.map((item) => valueText(item, profile)).join('; ')
-    case 'function':
-      return `function of ${value.parameters.join(', ')}`
-    case 'model':
-      return value.description
-  }
 }
