@@ -17,10 +17,17 @@ export function tableOf(call: Call): { readonly key: Formula; readonly table: Ta
 }
 
 /** The text that a key stands for, where it is known. */
-function keyText(key: Formula, { operands }: Printing): string | undefined {
+function keyText(key: Formula, operands: Printing['operands']): string | undefined {
   if (key.type === 'text') return key.value
   const value = meantBy(key, operands)?.value
   return value?.type === 'text' ? value.value : undefined
+}
+
+/** The entry that a table written in place gave, where its key is known. */
+export function entryOf(call: Call, operands: Printing['operands']): Formula | undefined {
+  const found = call.name === 'lookup' ? tableOf(call) : undefined
+  const known = found && keyText(found.key, operands)
+  return found?.table.fields.find((field) => field.key === known)?.value
 }
 
 /**
@@ -31,7 +38,7 @@ export function printLookup(call: Call, printing: Printing): Print | undefined {
   const found = tableOf(call)
   if (!found) return undefined
   const { key, table } = found
-  const known = keyText(key, printing)
+  const known = keyText(key, printing.operands)
   const taken = table.fields.findIndex((field) => field.key === known)
   const entry = table.fields[taken]
   if (printing.mode === 'numbers' && entry) return printing.print(withoutGroup(entry.value), printing)

@@ -112,3 +112,8 @@ export function operand(print: Print, level: number, mayBeSigned = false): Print
 export function withoutGroup(formula: Formula): Formula {
   return formula.type === 'group' ? withoutGroup(formula.body) : formula
 }
+
+/** A comparison as the right side of `=` needs brackets; a case distinction has its brace. */
+export function closed(print: Print): Print {
+  return print.level > LEVEL.case && print.level < LEVEL.sum ? bracketed(print) : print
+}

@@ -1,7 +1,7 @@
 import type { CheckLine, NamedLine } from '../../calculate/types.ts'
 import type { Profile } from '../../quantity/profile.ts'
 import type { CheckSide } from './check-equation.ts'
-import type { EquationParts } from './equation.ts'
+import type { EquationParts } from './equation-parts.ts'
 import { reasonsOf } from './case-tex.ts'
 import { comparisonWords, formulaWords } from './formula-words.ts'
 import { relationWord } from './logic-words.ts'

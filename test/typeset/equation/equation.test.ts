@@ -164,6 +164,12 @@ describe('case distinctions', () => {
     expect([substituted, result].filter((part) => part !== undefined)).toEqual(['0.34'])
   })
 
+  test('a branch or entry that is a number as typed is not followed by the same number rounded', () => {
+    expect(printed(given, 'x = a < b ? a : 1.50 m').tex).toContain('=1.50\\,\\mathrm{m}\\quad\\text{as }')
+    expect(printed('k = "p"', 'x = lookup(k, {p: 0.210, q: 0.340})').tex).toMatch(/=0\.210$/)
+    expect(printed('a = 3.0 m\nb = 2 m', 'x = a > b ? a : b').tex).not.toContain('=3\\,')
+  })
+
   test('a table of formulas is a case distinction', () => {
     const { symbolic, substituted } = printed(
       `${given}\nshape = "I"`,
